@@ -1,0 +1,138 @@
+//! Expressions with every name settled: the arena that relations, closed forms and conditions live in.
+
+use crate::syntax::{BinaryOp, Function};
+
+use super::{GasId, QuantityId};
+
+/// An expression of a sheet, by its place in the arena.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash, PartialOrd, Ord)]
+pub struct ExprId(pub u32);
+
+/// A function that a gas offers. Each takes one argument and gives SI units, by mass.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
+pub enum GasFunction {
+    /// Isobaric heat capacity of the ideal gas at a temperature.
+    HeatCapacity,
+    /// Enthalpy of the ideal gas at a temperature.
+    Enthalpy,
+    /// Entropy of the ideal gas at a temperature and 100 kPa.
+    Entropy,
+    /// Temperature that belongs to an enthalpy: the inverse of [`Self::Enthalpy`].
+    TemperatureOfEnthalpy,
+    /// Temperature that belongs to an entropy at 100 kPa: the inverse of [`Self::Entropy`].
+    TemperatureOfEntropy,
+    /// Internal energy of the ideal gas at a temperature, h - R T.
+    InternalEnergy,
+    /// Temperature that belongs to an internal energy.
+    TemperatureOfInternalEnergy,
+}
+
+/// A named constant.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
+pub enum Constant {
+    /// The circle's ratio.
+    Pi,
+    /// The molar gas constant.
+    MolarGasConstant,
+    /// The Avogadro constant.
+    Avogadro,
+    /// The Boltzmann constant.
+    Boltzmann,
+    /// Standard gravity.
+    StandardGravity,
+}
+
+/// An expression. Everything is in coherent SI units, pressures and temperatures absolute.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Expr {
+    /// A number in SI, and the literal it was written as (`u32::MAX` where it was not written).
+    Number(f64, u32),
+    /// A named constant.
+    Constant(Constant),
+    /// A quantity.
+    Quantity(QuantityId),
+    /// `-x`
+    Negate(ExprId),
+    /// Two operands.
+    Binary(BinaryOp, ExprId, ExprId),
+    /// A function of one argument; of `min` and `max` the second stands beside it.
+    Call(Function, ExprId, Option<ExprId>),
+    /// A function of a gas.
+    Gas(GasFunction, GasId, ExprId),
+    /// Pressure of the standard atmosphere at an altitude (ISO 2533).
+    StandardPressure(ExprId),
+}
+
+/// The arena.
+#[derive(Clone, Debug, Default)]
+pub struct Exprs {
+    nodes: Vec<Expr>,
+}
+
+impl Exprs {
+    /// Adds an expression.
+    pub fn add(&mut self, expr: Expr) -> ExprId {
+        self.nodes.push(expr);
+        ExprId(self.nodes.len() as u32 - 1)
+    }
+
+    /// A number that was not written in the sheet.
+    pub fn number(&mut self, value: f64) -> ExprId {
+        self.add(Expr::Number(value, u32::MAX))
+    }
+
+    /// Two operands.
+    pub fn binary(&mut self, op: BinaryOp, a: ExprId, b: ExprId) -> ExprId {
+        self.add(Expr::Binary(op, a, b))
+    }
+
+    /// The expression of an id of this arena.
+    #[must_use]
+    pub fn get(&self, id: ExprId) -> Expr {
+        self.nodes[id.0 as usize]
+    }
+
+    /// How many expressions there are.
+    #[must_use]
+    pub fn len(&self) -> usize {
+        self.nodes.len()
+    }
+
+    /// Whether there are none.
+    #[must_use]
+    pub fn is_empty(&self) -> bool {
+        self.nodes.is_empty()
+    }
+
+    /// The parts of an expression, left first.
+    pub fn parts(&self, id: ExprId) -> impl Iterator<Item = ExprId> + use<> {
+        let (a, b) = match self.get(id) {
+            Expr::Number(..) | Expr::Constant(_) | Expr::Quantity(_) => (None, None),
+            Expr::Negate(a) | Expr::Gas(_, _, a) | Expr::StandardPressure(a) => (Some(a), None),
+            Expr::Binary(_, a, b) => (Some(a), Some(b)),
+            Expr::Call(_, a, b) => (Some(a), b),
+        };
+        a.into_iter().chain(b)
+    }
+
+    /// Calls `visit` with every quantity below `id`, in the order written, as often as it stands there.
+    pub fn quantities(&self, id: ExprId, visit: &mut impl FnMut(QuantityId)) {
+        let mut open = vec![id];
+        while let Some(id) = open.pop() {
+            if let Expr::Quantity(quantity) = self.get(id) {
+                visit(quantity);
+            }
+            let from = open.len();
+            open.extend(self.parts(id));
+            open[from..].reverse();
+        }
+    }
+
+    /// Whether `quantity` stands below `id`.
+    #[must_use]
+    pub fn mentions(&self, id: ExprId, quantity: QuantityId) -> bool {
+        let mut found = false;
+        self.quantities(id, &mut |other| found |= other == quantity);
+        found
+    }
+}

@@ -1,0 +1,107 @@
+//! Writes an expression as a sheet would.
+
+use crate::syntax::BinaryOp;
+
+use super::{Expr, ExprId, GasFunction, Sheet};
+
+/// How tightly an expression holds together.
+#[derive(Clone, Copy, PartialEq, Eq, PartialOrd, Ord)]
+enum Tightness {
+    Sum,
+    Product,
+    Sign,
+    Power,
+    Atom,
+}
+
+/// The text of an expression, in the syntax of a sheet, with no more brackets than it needs.
+#[must_use]
+pub fn write_expr(sheet: &Sheet, expr: ExprId) -> String {
+    let mut text = String::new();
+    write(sheet, expr, &mut text);
+    text
+}
+
+fn tightness(sheet: &Sheet, expr: ExprId) -> Tightness {
+    match sheet.exprs.get(expr) {
+        Expr::Binary(BinaryOp::Add | BinaryOp::Subtract, ..) => Tightness::Sum,
+        Expr::Binary(BinaryOp::Multiply | BinaryOp::Divide, ..) => Tightness::Product,
+        Expr::Binary(BinaryOp::Power, ..) => Tightness::Power,
+        Expr::Negate(_) => Tightness::Sign,
+        Expr::Number(value, literal) if value < 0.0 && sheet.literals.get(literal as usize).is_none() => Tightness::Sign,
+        _ => Tightness::Atom,
+    }
+}
+
+fn bracketed(sheet: &Sheet, expr: ExprId, least: Tightness, text: &mut String) {
+    if tightness(sheet, expr) < least {
+        text.push('(');
+        write(sheet, expr, text);
+        text.push(')');
+    } else {
+        write(sheet, expr, text);
+    }
+}
+
+fn write(sheet: &Sheet, expr: ExprId, text: &mut String) {
+    match sheet.exprs.get(expr) {
+        Expr::Number(value, literal) => match sheet.literals.get(literal as usize) {
+            Some(shown) => {
+                text.push_str(&shown.number);
+                if !shown.unit.is_empty() {
+                    text.push(' ');
+                    text.push_str(&shown.unit);
+                }
+            }
+            None => text.push_str(&format!("{value}")),
+        },
+        Expr::Constant(constant) => text.push_str(constant.word()),
+        Expr::Quantity(id) => text.push_str(&sheet.quantity(id).name),
+        Expr::Negate(inner) => {
+            text.push('-');
+            bracketed(sheet, inner, Tightness::Power, text);
+        }
+        Expr::Binary(op, a, b) => {
+            let (sign, left, right) = match op {
+                BinaryOp::Add => (" + ", Tightness::Sum, Tightness::Sum),
+                BinaryOp::Subtract => (" - ", Tightness::Sum, Tightness::Product),
+                BinaryOp::Multiply => (" * ", Tightness::Product, Tightness::Product),
+                BinaryOp::Divide => (" / ", Tightness::Product, Tightness::Sign),
+                BinaryOp::Power => ("^", Tightness::Atom, Tightness::Power),
+            };
+            bracketed(sheet, a, left, text);
+            text.push_str(sign);
+            bracketed(sheet, b, right, text);
+        }
+        Expr::Call(function, a, b) => {
+            text.push_str(function.word());
+            text.push('(');
+            write(sheet, a, text);
+            if let Some(b) = b {
+                text.push_str(", ");
+                write(sheet, b, text);
+            }
+            text.push(')');
+        }
+        Expr::Gas(function, gas, a) => {
+            let name = &sheet.gas(gas).name;
+            let function = match function {
+                GasFunction::HeatCapacity => "cp",
+                GasFunction::Enthalpy => "h",
+                GasFunction::InternalEnergy => "u",
+                GasFunction::Entropy => "s",
+                GasFunction::TemperatureOfEnthalpy => "T_of_h",
+                GasFunction::TemperatureOfInternalEnergy => "T_of_u",
+                GasFunction::TemperatureOfEntropy => "T_of_s",
+            };
+            text.push_str(&format!("{name}.{function}("));
+            write(sheet, a, text);
+            text.push(')');
+        }
+        Expr::StandardPressure(a) => {
+            text.push_str("standard_atmosphere(");
+            write(sheet, a, text);
+            text.push(')');
+        }
+    }
+}
