@@ -1,0 +1,119 @@
+//! The way of a sheet through the rooms.
+
+use sha2::{Digest, Sha256};
+
+use crate::diagnostic::{Diagnostic, finding};
+use crate::sheet::{self, Sheet};
+use crate::solve::{self, Solution, Verdict};
+use crate::syntax::{self, StatementKind, Tree};
+
+/// A sheet read and checked: names, units, dimensions, kinds, structure.
+#[derive(Clone, Debug)]
+pub struct Checked {
+    /// What the text says.
+    pub tree: Tree,
+    /// What it means.
+    pub sheet: Sheet,
+    /// What there is to know of it, in the order of the text.
+    pub findings: Vec<Diagnostic>,
+    /// The digest of its content.
+    pub digest: String,
+}
+
+/// A sheet solved, or the findings that say why not.
+#[derive(Clone, Debug)]
+pub struct Solved {
+    /// What the text says.
+    pub tree: Tree,
+    /// What it means.
+    pub sheet: Sheet,
+    /// The result; `None` where a finding is an error.
+    pub solution: Option<Solution>,
+    /// What there is to know of it, in the order of the text.
+    pub findings: Vec<Diagnostic>,
+    /// The digest of its content.
+    pub digest: String,
+}
+
+/// What became of a sheet, as the exit status of a command says it.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum ExitStatus {
+    /// Solved, and every requirement and judged assumption holds.
+    Solved,
+    /// The sheet has errors.
+    Errors,
+    /// Solved, but a requirement or a judged assumption fails.
+    Fails,
+}
+
+impl Solved {
+    /// What became of the sheet.
+    #[must_use]
+    pub fn exit_status(&self) -> ExitStatus {
+        let Some(solution) = &self.solution else { return ExitStatus::Errors };
+        let required = solution.requirements.iter().all(|judged| judged.holds);
+        let assumed = solution.assumptions.iter().flatten().all(|judged| judged.holds);
+        let ideal = solution.states.iter().all(|state| state.verdict != Verdict::Failed);
+        if required && assumed && ideal { ExitStatus::Solved } else { ExitStatus::Fails }
+    }
+}
+
+/// Reads a sheet and checks it as far as names, dimensions and structure go; nothing is solved.
+#[must_use]
+pub fn check(text: &str) -> Checked {
+    let (tree, mut findings) = syntax::parse(text);
+    let (sheet, more) = sheet::read(&tree, text);
+    findings.extend(more);
+    findings.extend(solve::check(&sheet));
+    finding::sort(&mut findings);
+    let digest = digest(&tree, text);
+    Checked { tree, sheet, findings, digest }
+}
+
+/// Reads, checks and solves a sheet.
+#[must_use]
+pub fn solve(text: &str) -> Solved {
+    let (tree, mut findings) = syntax::parse(text);
+    let (mut sheet, more) = sheet::read(&tree, text);
+    findings.extend(more);
+    let sound = !findings.iter().any(Diagnostic::is_error);
+    let solution = if sound {
+        let (solution, more) = solve::solve(&mut sheet);
+        findings.extend(more);
+        solution
+    } else {
+        findings.extend(solve::check(&sheet));
+        None
+    };
+    finding::sort(&mut findings);
+    let digest = digest(&tree, text);
+    Solved { tree, sheet, solution, findings, digest }
+}
+
+/// The digest of what a sheet says: of its head and of the canonical text of its statements. Layout, comments and the order
+/// of lines do not enter; prose and titles do.
+#[must_use]
+pub fn digest(tree: &Tree, text: &str) -> String {
+    let mut lines: Vec<String> = tree
+        .statements
+        .iter()
+        .map(|statement| match &statement.kind {
+            StatementKind::Bad { .. } => statement.span.of(text).split_whitespace().collect::<Vec<_>>().join(" "),
+            _ => syntax::canonical(tree, text, statement),
+        })
+        .collect();
+    lines.sort();
+    let mut hash = Sha256::new();
+    if let Some(head) = tree.head.span {
+        hash.update(head.of(text).replace("\r\n", "\n").as_bytes());
+    }
+    for line in lines {
+        hash.update(b"\n");
+        hash.update(line.as_bytes());
+    }
+    let mut digest = String::from("sha256:");
+    for byte in hash.finalize() {
+        digest.push_str(&format!("{byte:02x}"));
+    }
+    digest
+}
