@@ -1,0 +1,7 @@
+//! Layout: statements in their canonical form, one by one for digests, or a whole file.
+
+mod canonical;
+mod tidy;
+
+pub use canonical::canonical;
+pub use tidy::tidy;

@@ -1,0 +1,93 @@
+//! Slips in units: blanks inside, a power with `^`, the inch.
+
+use super::token::{Token, TokenKind};
+use crate::diagnostic::code::{inch_word, unit_power, unit_with_blanks};
+use crate::diagnostic::{Diagnostic, Span};
+
+/// Longest unit word that is taken for one where a name could also stand.
+const LONGEST_UNIT_WORD: usize = 6;
+
+/// Looks at the tokens around the place where reading stopped.
+pub(super) fn look(tokens: &[Token<'_>], stop: usize) -> Option<Diagnostic> {
+    inch(tokens, stop).or_else(|| blanks(tokens, stop)).or_else(|| power(tokens, stop))
+}
+
+/// `6 in`: the word is taken.
+fn inch(tokens: &[Token<'_>], stop: usize) -> Option<Diagnostic> {
+    for index in [Some(stop), stop.checked_sub(1)].into_iter().flatten() {
+        let Some(word) = tokens.get(index).filter(|token| token.is_word("in")) else { continue };
+        let number = index.checked_sub(1).map(|before| &tokens[before])?;
+        if number.kind == TokenKind::Number {
+            return Some(inch_word::finding(number.text, word.span));
+        }
+    }
+    None
+}
+
+/// `9.81 m / s2`: the sign of division belongs to the unit, and the blanks cut it off.
+fn blanks(tokens: &[Token<'_>], stop: usize) -> Option<Diagnostic> {
+    let sign = tokens.get(stop).filter(|token| token.is_mark(&["/", ".", "·", "⋅", "*", "×"]))?;
+    stop.checked_sub(1).filter(|before| tokens[*before].kind == TokenKind::Word)?;
+    let start = start_of_unit(tokens, stop)?;
+    let next = tokens.get(stop + 1)?;
+    let end = match next.kind {
+        TokenKind::Word if is_like_a_unit(next.text) => end_of_unit(tokens, stop + 1),
+        TokenKind::Mark if next.text == "(" => {
+            let close = tokens[stop + 1..].iter().position(|token| token.is_mark(&[")"]))?;
+            tokens[stop + 1 + close].span.end
+        }
+        _ => return None,
+    };
+    let parts: Vec<&Token<'_>> = tokens[start..].iter().take_while(|token| token.span.end <= end).collect();
+    let has_blank = parts.windows(2).any(|pair| !pair[0].touches(pair[1]));
+    if !has_blank && !sign.is_mark(&["*", "×"]) {
+        return None;
+    }
+    let mut joined = String::new();
+    for (index, part) in parts.iter().enumerate() {
+        let beside = index > 0 && part.kind == TokenKind::Word && parts[index - 1].kind == TokenKind::Word;
+        joined.push_str(if beside { "." } else { "" });
+        joined.push_str(if part.is_mark(&["*", "×", "·", "⋅"]) { "." } else { part.text });
+    }
+    let whole = Span { start: tokens[start].span.start, end };
+    Some(unit_with_blanks::finding(Span { start: sign.span.start, end }, whole, &joined))
+}
+
+/// `2 m^2` where no expression can stand.
+fn power(tokens: &[Token<'_>], stop: usize) -> Option<Diagnostic> {
+    let hat = tokens.get(stop).filter(|token| token.is_mark(&["^"]))?;
+    let unit = stop.checked_sub(1).map(|before| &tokens[before]).filter(|token| token.kind == TokenKind::Word)?;
+    let exponent = tokens.get(stop + 1).filter(|token| token.kind == TokenKind::Number)?;
+    Some(unit_power::of_a_unit(unit.span.to(exponent.span), unit.text, exponent.text, hat.span.to(exponent.span)))
+}
+
+/// The index of the first token of the unit that ends before `stop`, if a number or `in` stands before it.
+fn start_of_unit(tokens: &[Token<'_>], stop: usize) -> Option<usize> {
+    let mut index = stop.checked_sub(1)?;
+    loop {
+        let before = index.checked_sub(1).map(|before| &tokens[before])?;
+        if before.kind == TokenKind::Number || before.is_word("in") {
+            return Some(index);
+        }
+        if !before.touches(&tokens[index]) || before.kind == TokenKind::Text {
+            return None;
+        }
+        index -= 1;
+    }
+}
+
+/// Where the unit that goes on at `start` ends: the tokens that touch, and what a further sign joins to them.
+fn end_of_unit(tokens: &[Token<'_>], start: usize) -> u32 {
+    let mut end = start;
+    while let (Some(sign), Some(next)) = (tokens.get(end + 1), tokens.get(end + 2)) {
+        if !sign.is_mark(&["/", ".", "·", "⋅"]) || next.kind != TokenKind::Word || !is_like_a_unit(next.text) {
+            break;
+        }
+        end += 2;
+    }
+    tokens[end].span.end
+}
+
+fn is_like_a_unit(word: &str) -> bool {
+    word.chars().count() <= LONGEST_UNIT_WORD && !word.contains('_')
+}
