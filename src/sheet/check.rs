@@ -174,6 +174,15 @@ impl Reader<'_> {
         }
     }
 
+    /// A number whose unit is spelled like a quantity of the sheet: `2 V` for `2 * V`.
+    fn missing_multiplication(&self, side: ExprId) -> Option<String> {
+        let Expr::Number(_, literal) = self.sheet.exprs.get(side) else { return None };
+        let literal = self.sheet.literals.get(literal as usize)?;
+        let name = self.tree.names.find(&literal.unit).filter(|name| self.names.contains_key(name))?;
+        let (number, name) = (&literal.number, self.tree.names.text(name));
+        Some(format!("a word straight after a number is its unit; for the quantity `{name}` write `{number} * {name}`"))
+    }
+
     /// Adds where the quantities of the terms get their dimension from.
     fn with_provenance(&self, mut finding: Diagnostic, terms: &[ExprId]) -> Diagnostic {
         /// More than these crowd the finding.
@@ -293,6 +302,9 @@ impl Reader<'_> {
                     }
                     if let Some(slip) = usual_slip(left.dimension, right.dimension) {
                         finding = finding.fact(slip);
+                    }
+                    if let Some(missing) = [a, b].into_iter().find_map(|side| self.missing_multiplication(side)) {
+                        finding = finding.help(missing);
                     }
                     let finding = self.with_provenance(finding, &[a, b]);
                     self.report(finding);

@@ -18,19 +18,19 @@ impl Reader<'_> {
                 if statement.because.is_none() {
                     self.report(code::assumption_without_reason::finding(statement.span));
                 }
-                if let Some(clause) = self.clause(statement, condition.as_ref(), lowered, "the assumption") {
+                if let Some(clause) = self.clause(statement, condition.as_ref(), lowered) {
                     self.sheet.assumptions.push(clause);
                 }
             }
             StatementKind::Require { condition } => {
                 let lowered = Some(self.condition(condition));
-                if let Some(clause) = self.clause(statement, Some(condition), lowered, "the requirement") {
+                if let Some(clause) = self.clause(statement, Some(condition), lowered) {
                     self.sheet.requirements.push(clause);
                 }
             }
             StatementKind::Caution { when } => {
                 let lowered = when.as_ref().map(|condition| self.condition(condition));
-                if let Some(clause) = self.clause(statement, when.as_ref(), lowered, "the caution") {
+                if let Some(clause) = self.clause(statement, when.as_ref(), lowered) {
                     self.sheet.cautions.push(clause);
                 }
             }
@@ -84,11 +84,9 @@ impl Reader<'_> {
         }
     }
 
-    fn clause(&mut self, statement: &Statement, condition: Option<&syntax::Condition>, lowered: Option<Option<Condition>>, what: &str) -> Option<Clause> {
-        let Some(description) = &statement.description else {
-            self.report(code::description_missing::finding(statement.span, what));
-            return None;
-        };
+    fn clause(&mut self, statement: &Statement, condition: Option<&syntax::Condition>, lowered: Option<Option<Condition>>) -> Option<Clause> {
+        // A clause without its text is told where the line was read.
+        let description = statement.description.as_ref()?;
         if matches!(lowered, Some(None)) {
             return None;
         }
@@ -174,13 +172,13 @@ impl Reader<'_> {
             }
         }
         for pending in std::mem::take(&mut self.pending_answers) {
-            if let Some(shown) = self.shown_for(&pending, "answer") {
+            if let Some(shown) = self.shown_for(&pending) {
                 let PendingAnswer { statement, span, quantity, figures, .. } = pending;
                 self.sheet.answers.push(Answer { quantity, shown, figures, statement, span });
             }
         }
         for pending in std::mem::take(&mut self.pending_live) {
-            if let Some(shown) = self.shown_for(&pending, "prose") {
+            if let Some(shown) = self.shown_for(&pending) {
                 let PendingAnswer { statement, span, quantity, .. } = pending;
                 self.sheet.live_values.push(LiveValue { statement, span, quantity, shown });
             }
@@ -240,7 +238,7 @@ impl Reader<'_> {
     }
 
     /// The unit that an answer or a live value is shown in; `None` where it does not fit, which is told.
-    fn shown_for(&mut self, pending: &PendingAnswer, place: &str) -> Option<ShownUnit> {
+    fn shown_for(&mut self, pending: &PendingAnswer) -> Option<ShownUnit> {
         let at = pending.quantity.0 as usize;
         if self.undetermined[at] {
             return None;
@@ -265,7 +263,6 @@ impl Reader<'_> {
             self.report(finding);
             return None;
         }
-        let _ = place;
         Some(shown.clone())
     }
 
@@ -284,7 +281,8 @@ impl Reader<'_> {
         let mut first: Vec<Option<ShownUnit>> = vec![None; self.sheet.quantities.len()];
         for answer in &self.sheet.answers {
             let entry = &mut first[answer.quantity.0 as usize];
-            if entry.is_none() && !(answer.shown.unit.name.is_empty() && !self.sheet.quantity(answer.quantity).dimension.is_none()) {
+            let shows_unit = !answer.shown.unit.name.is_empty() || self.sheet.quantity(answer.quantity).dimension.is_none();
+            if entry.is_none() && shows_unit {
                 *entry = Some(answer.shown.clone());
             }
         }

@@ -3,7 +3,7 @@
 use std::collections::{BTreeMap, HashMap};
 
 use crate::diagnostic::{Diagnostic, Span, code};
-use crate::syntax::{Name, Statement, StatementKind, Tree};
+use crate::syntax::{ExprKind, Name, Statement, StatementKind, Tree};
 use crate::units::{Dimension, Unit};
 
 use super::{ExprId, GasId, Kind, Origin, Property, Quantity, QuantityId, Relation, RelationOrigin, Sheet, ShownUnit, StateId};
@@ -131,7 +131,8 @@ pub fn read(tree: &Tree, text: &str) -> (Sheet, Vec<Diagnostic>) {
     reader.settle_shown_units();
     reader.drop_what_hangs_on_errors();
     // In a sheet with errors every slip may be the shadow of one.
-    if reader.errors == 0 && tree.statements.iter().all(|statement| !matches!(statement.kind, StatementKind::Bad { .. })) {
+    let read_well = tree.statements.iter().all(|statement| !matches!(statement.kind, StatementKind::Bad { .. }));
+    if reader.errors == 0 && read_well && tree.expressions.iter().all(|expr| expr.kind != ExprKind::Bad) {
         reader.slips();
     }
     reader.sheet.poisoned = (0..reader.poisoned.len()).filter(|at| reader.poisoned[*at]).map(|at| QuantityId(at as u32)).collect();
@@ -302,13 +303,26 @@ impl<'a> Reader<'a> {
                     (None, None) => {}
                 }
             }
-            StatementKind::State { name, gas, at } => self.state(statement, *name, *gas, at),
+            StatementKind::State { name, gas, at } => self.state(*name, *gas, at),
+            StatementKind::Bad { .. } => self.poison_named_in(statement.span),
             _ => {}
         }
     }
 
     pub(super) fn relation(&mut self, left: ExprId, right: ExprId, origin: RelationOrigin, span: Span) {
         self.sheet.relations.push(Relation { left, right, origin, statement: self.statement, span });
+    }
+
+    /// A line that could not be read may have been the one that determines what it names.
+    fn poison_named_in(&mut self, span: Span) {
+        let words = span.of(self.text).split(|c: char| !(c.is_ascii_alphanumeric() || c == '_'));
+        for word in words.filter(|word| !word.is_empty()) {
+            if let Some((Meaning::Quantity(id), _)) = self.tree.names.find(word).and_then(|name| self.names.get(&name))
+                && !self.sheet.quantity(*id).is_known()
+            {
+                self.poisoned[id.0 as usize] = true;
+            }
+        }
     }
 
     /// The line that would have determined one of these quantities is in error: they stay silent.

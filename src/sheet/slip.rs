@@ -119,9 +119,9 @@ impl Reader<'_> {
             uses[correlation.a.0 as usize] += 1;
             uses[correlation.b.0 as usize] += 1;
         }
-        for at in 0..uses.len() {
+        for (at, n_uses) in uses.iter().enumerate() {
             let quantity = &self.sheet.quantities[at];
-            if uses[at] > 0 || self.poisoned[at] {
+            if *n_uses > 0 || self.poisoned[at] {
                 continue;
             }
             match quantity.origin {

@@ -117,7 +117,7 @@ impl Reader<'_> {
     }
 
     /// A `state` line.
-    pub(super) fn state(&mut self, statement: &Statement, name: Named, gas: Named, at: &[(Named, syntax::ExprId)]) {
+    pub(super) fn state(&mut self, name: Named, gas: Named, at: &[(Named, syntax::ExprId)]) {
         let Some((Meaning::State(state), span)) = self.names.get(&name.name).copied().filter(|(_, span)| *span == name.span) else {
             for (_, expr) in at {
                 self.lower(*expr);
@@ -193,7 +193,6 @@ impl Reader<'_> {
             self.relation(left, value, RelationOrigin::At(state, property), whole);
             self.sheet.states[index].at.push((property, span));
         }
-        let _ = statement;
     }
 
     /// The laws of every state, between the properties that the sheet uses.

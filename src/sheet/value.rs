@@ -102,7 +102,7 @@ impl Reader<'_> {
         let pressure = unit.needs_basis();
         let temperature = unit.dimension == Dimension::TEMPERATURE;
         match text.basis {
-            Some((basis, span)) if !pressure && !(temperature && basis == Basis::Difference) => {
+            Some((basis, span)) if !(pressure || temperature && basis == Basis::Difference) => {
                 let dimension = unit.dimension.describe();
                 self.report(code::basis_out_of_place::finding(span, basis.word(), &dimension));
                 None
@@ -218,8 +218,9 @@ impl Reader<'_> {
             reader.report(code::uncertainty_out_of_place::finding(span, why, help));
             None
         };
-        if let Some(exact) = literal.exact {
-            return refuse(self, exact.to(stated.span), "an exact value has none", "leave out `exact` or the uncertainty");
+        if literal.exact.is_some() {
+            // An exact value has no uncertainty: told where the line was read.
+            return None;
         }
         let width_si = match &stated.width {
             Width::Of(width) => self.width(width, value, stated.span)?,

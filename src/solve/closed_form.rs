@@ -8,7 +8,7 @@ use crate::syntax::{BinaryOp, Function};
 
 /// A relation rearranged: the expressions that give the quantity, one for each branch.
 #[derive(Clone, Debug, PartialEq, Eq)]
-pub enum ClosedForm {
+pub(super) enum ClosedForm {
     /// One expression.
     One(ExprId),
     /// Two, of which each may satisfy the relation.
@@ -20,7 +20,7 @@ pub enum ClosedForm {
 }
 
 /// Rearranges `left = right` for `x`; `nonnegative` says that x cannot be below zero.
-pub fn solve_for(exprs: &mut Exprs, left: ExprId, right: ExprId, x: QuantityId, nonnegative: bool) -> ClosedForm {
+pub(super) fn solve_for(exprs: &mut Exprs, left: ExprId, right: ExprId, x: QuantityId, nonnegative: bool) -> ClosedForm {
     let (in_left, in_right) = (count(exprs, left, x), count(exprs, right, x));
     match (in_left, in_right) {
         (0, 0) => ClosedForm::None,
@@ -115,9 +115,9 @@ fn invert(exprs: &mut Exprs, side: ExprId, other: ExprId, x: QuantityId, nonnega
 fn root(exprs: &mut Exprs, base: ExprId, exponent: ExprId, target: ExprId, x: QuantityId, nonnegative: bool) -> ClosedForm {
     let whole = constant(exprs, exponent);
     let positive = match whole {
-        Some(n) if n == 0.0 => return ClosedForm::None,
-        Some(n) if n == 2.0 => exprs.add(Expr::Call(Function::Sqrt, target, None)),
-        Some(n) if n == 3.0 => exprs.add(Expr::Call(Function::Cbrt, target, None)),
+        Some(0.0) => return ClosedForm::None,
+        Some(2.0) => exprs.add(Expr::Call(Function::Sqrt, target, None)),
+        Some(3.0) => exprs.add(Expr::Call(Function::Cbrt, target, None)),
         Some(n) => {
             let inverse = exprs.number(1.0 / n);
             exprs.binary(BinaryOp::Power, target, inverse)

@@ -162,15 +162,15 @@ mod tests {
     #[test]
     fn a_large_system_of_ill_scaled_unknowns_is_solved_to_the_last_figures() {
         let n = 400;
-        let size = |at: usize| if at % 2 == 0 { 1e6 } else { 1e-4 };
+        let size = |at: usize| if at.is_multiple_of(2) { 1e6 } else { 1e-4 };
         let expected: Vec<f64> = (0..n).map(|at| size(at) * (1.0 + at as f64 / n as f64)).collect();
         let mut matrix = Vec::new();
         let mut right = vec![0.0; n];
-        for row in 0..n {
+        for (row, sum) in right.iter_mut().enumerate() {
             for (column, factor) in [(row, 4.0), ((row + 1) % n, -1.0), ((row + 7) % n, 1.5)] {
-                let value = factor / size(column) * if row % 3 == 0 { 1e3 } else { 1.0 };
+                let value = factor / size(column) * if row.is_multiple_of(3) { 1e3 } else { 1.0 };
                 matrix.push(Entry { row: row as u32, column: column as u32, value });
-                right[row] += value * expected[column];
+                *sum += value * expected[column];
             }
         }
         let scales: Vec<f64> = (0..n).map(size).collect();

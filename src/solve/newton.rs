@@ -125,8 +125,9 @@ pub(super) fn run(system: &mut impl System, unknowns: &[Unknown], start: &[f64])
     let mut worst = (0, 0.0f64);
     for at in 0..n {
         let scaled = if f[at] == 0.0 { 0.0 } else { f[at].abs() / sizes[at] };
-        if !(scaled <= worst.1) {
-            worst = (at, if scaled.is_nan() { f64::INFINITY } else { scaled });
+        let scaled = if scaled.is_nan() { f64::INFINITY } else { scaled };
+        if scaled > worst.1 {
+            worst = (at, scaled);
         }
     }
     Run { x, residual: worst.1, worst: worst.0, evaluations }

@@ -12,7 +12,7 @@ const HOTTEST_K: f64 = 1e5;
 /// Whether a quantity cannot be below zero: what a scale, a gauge or a level shows of an amount of matter, an absolute
 /// pressure or temperature.
 #[must_use]
-pub fn cannot_be_negative(quantity: &Quantity) -> bool {
+pub(super) fn cannot_be_negative(quantity: &Quantity) -> bool {
     let dimension = quantity.dimension;
     if dimension == Dimension::PRESSURE || dimension == Dimension::TEMPERATURE {
         return quantity.kind == Kind::Absolute;
@@ -26,13 +26,13 @@ pub fn cannot_be_negative(quantity: &Quantity) -> bool {
 /// Whether the positive one of two roots is meant without a word: lengths and areas, which may be negative only as
 /// differences, and all that cannot be negative.
 #[must_use]
-pub fn is_taken_positive(quantity: &Quantity) -> bool {
+pub(super) fn is_taken_positive(quantity: &Quantity) -> bool {
     cannot_be_negative(quantity) || quantity.dimension == Dimension::LENGTH || quantity.dimension == Dimension::AREA
 }
 
 /// The usual size of a quantity in SI, to start from and to scale by.
 #[must_use]
-pub fn usual_size(quantity: &Quantity) -> f64 {
+pub(super) fn usual_size(quantity: &Quantity) -> f64 {
     let dimension = quantity.dimension;
     if dimension == Dimension::PRESSURE {
         return if quantity.kind == Kind::Difference { 1e4 } else { 1e5 };
@@ -52,7 +52,7 @@ pub fn usual_size(quantity: &Quantity) -> f64 {
 
 /// The widest range in which a quantity is looked for.
 #[must_use]
-pub fn widest(sheet: &Sheet, quantity: &Quantity) -> (f64, f64) {
+pub(super) fn widest(sheet: &Sheet, quantity: &Quantity) -> (f64, f64) {
     let size = usual_size(quantity);
     let high = size * DECADES;
     if quantity.dimension == Dimension::TEMPERATURE && quantity.kind != Kind::Difference {
@@ -65,5 +65,5 @@ pub fn widest(sheet: &Sheet, quantity: &Quantity) -> (f64, f64) {
         }
         return (1e-3, HOTTEST_K);
     }
-    if is_taken_positive(quantity) { (0.0, high) } else { (-high, high) }
+    if cannot_be_negative(quantity) { (0.0, high) } else { (-high, high) }
 }

@@ -89,7 +89,7 @@ pub(super) struct SideSlots {
 
 /// The plan.
 #[derive(Clone, Debug)]
-pub struct Plan {
+pub(super) struct Plan {
     pub(super) tape: Tape,
     pub(super) segments: Vec<Segment>,
     pub(super) blocks: Vec<Block>,

@@ -155,7 +155,7 @@ impl Evaluation<'_> {
         let (low, high, near) = (value(bounds.low), value(bounds.high), value(bounds.near));
         let reach = near.unwrap_or(0.0).abs().max(low.unwrap_or(0.0).abs()) * 1e6;
         Range {
-            low: low.unwrap_or(if physics::is_taken_positive(quantity) { widest_low } else { widest_low.min(-reach) }),
+            low: low.unwrap_or(if physics::cannot_be_negative(quantity) { widest_low } else { widest_low.min(-reach) }),
             high: high.unwrap_or(widest_high.max(reach)),
             near,
             stated: low.is_some() && high.is_some(),
@@ -194,6 +194,8 @@ impl Evaluation<'_> {
             branches
         };
         let mut inside: Vec<f64> = Vec::new();
+        // Roots with a negative length or area count where there is no other.
+        let mut negative: Vec<f64> = Vec::new();
         let mut outside = None;
         for root in found {
             let sample = self.sample_at(block, slot, root, size, inputs);
@@ -201,9 +203,13 @@ impl Evaluation<'_> {
                 continue;
             }
             match self.beyond(sheet, block) {
-                None => inside.push(root),
+                None if self.is_taken_positive(sheet, block) => inside.push(root),
+                None => negative.push(root),
                 Some(fault) => outside = outside.or(Some(fault)),
             }
+        }
+        if inside.is_empty() {
+            inside = negative;
         }
         let chosen = match (inside.len(), range.near) {
             (0, _) => return Err(outside.unwrap_or(Fault::NoRoot { quantity, low: range.low, high: range.high })),
@@ -240,12 +246,20 @@ impl Evaluation<'_> {
         let mut best = None;
         for root in roots {
             self.sample_at(block, slot, *root, size, inputs);
-            let distance: f64 = nears.iter().map(|(slot, near)| ((self.values[*slot as usize] - near) / near.abs().max(1e-12)).powi(2)).sum();
+            let distance: f64 = nears.iter().map(|(slot, near)| crate::units::math::powi((self.values[*slot as usize] - near) / near.abs().max(1e-12), 2)).sum();
             if best.is_none_or(|(least, _)| distance < least) {
                 best = Some((distance, *root));
             }
         }
         best.map(|(_, root)| root)
+    }
+
+    /// Whether every quantity of a block that is taken for positive without a word is so, at the values that stand.
+    fn is_taken_positive(&self, sheet: &Sheet, block: &Block) -> bool {
+        block.bounds.iter().all(|bounds| {
+            let value = self.values[self.plan.slots[bounds.quantity.0 as usize] as usize];
+            value >= 0.0 || bounds.low.is_some() || !physics::is_taken_positive(sheet.quantity(bounds.quantity))
+        })
     }
 
     /// The first quantity of a block that lies beyond its bounds, at the values that stand.
@@ -254,7 +268,7 @@ impl Evaluation<'_> {
             let value = self.values[self.plan.slots[bounds.quantity.0 as usize] as usize];
             let range = self.range(sheet, bounds);
             let quantity = sheet.quantity(bounds.quantity);
-            let lowest = if bounds.low.is_some() || physics::is_taken_positive(quantity) { range.low } else { f64::NEG_INFINITY };
+            let lowest = if bounds.low.is_some() || physics::cannot_be_negative(quantity) { range.low } else { f64::NEG_INFINITY };
             let highest = if bounds.high.is_some() { range.high } else { f64::INFINITY };
             let slack = |bound: f64| ON_THE_BOUND * bound.abs();
             (!value.is_finite() || value < lowest - slack(lowest) || value > highest + slack(highest))
@@ -298,6 +312,12 @@ impl Evaluation<'_> {
             } else if best.as_ref().is_none_or(|best| run.residual < best.residual) {
                 best = Some(run);
             }
+        }
+        let positive = |run: &newton::Run| {
+            run.x.iter().zip(&block.bounds).all(|(x, bounds)| *x >= 0.0 || bounds.low.is_some() || !physics::is_taken_positive(sheet.quantity(bounds.quantity)))
+        };
+        if solutions.iter().any(positive) {
+            solutions.retain(positive);
         }
         let Some(solution) = solutions.first().cloned() else {
             let (worst, residual, x) = best.map_or((0, f64::INFINITY, Vec::new()), |best| (best.worst, best.residual, best.x));

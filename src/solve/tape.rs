@@ -9,11 +9,11 @@ use crate::syntax::Function;
 use crate::units::math;
 
 /// The place of an operation on the tape, and of its value.
-pub type Slot = u32;
+pub(super) type Slot = u32;
 
 /// One operation. Its value stands in its own slot.
 #[derive(Clone, Copy, Debug, PartialEq)]
-pub enum Op {
+pub(super) enum Op {
     /// An input, by its number.
     Input(u32),
     /// A number.
@@ -75,7 +75,7 @@ fn scaled(derivative: f64, tangent: f64) -> f64 {
 
 /// The operations, and the gases that they use.
 #[derive(Clone, Debug, Default)]
-pub struct Tape {
+pub(super) struct Tape {
     ops: Vec<Op>,
     gases: Vec<Arc<Gas>>,
 }
@@ -83,24 +83,18 @@ pub struct Tape {
 impl Tape {
     /// An empty tape over the gases of a sheet.
     #[must_use]
-    pub fn new(gases: Vec<Arc<Gas>>) -> Self {
+    pub(super) fn new(gases: Vec<Arc<Gas>>) -> Self {
         Self { ops: Vec::new(), gases }
     }
 
     /// How many operations there are.
     #[must_use]
-    pub fn len(&self) -> usize {
+    pub(super) fn len(&self) -> usize {
         self.ops.len()
     }
 
-    /// Whether there are none.
-    #[must_use]
-    pub fn is_empty(&self) -> bool {
-        self.ops.is_empty()
-    }
-
     /// Adds an operation. Powers with a constant whole or half exponent become products and roots.
-    pub fn push(&mut self, op: Op) -> Slot {
+    pub(super) fn push(&mut self, op: Op) -> Slot {
         let op = match op {
             Op::Power(base, exponent) => match self.ops[exponent as usize] {
                 Op::Constant(value) if value.abs() <= LARGEST_POWER && value == value.round() => Op::Integer(base, value as i32),
@@ -115,7 +109,7 @@ impl Tape {
 
     /// The slots before a range that it reads, ascending.
     #[must_use]
-    pub fn reads_before(&self, range: Range<usize>) -> Vec<Slot> {
+    pub(super) fn reads_before(&self, range: Range<usize>) -> Vec<Slot> {
         let mut found = Vec::new();
         for op in &self.ops[range.clone()] {
             found.extend(op.operands().into_iter().flatten().filter(|slot| (*slot as usize) < range.start));
@@ -126,7 +120,7 @@ impl Tape {
     }
 
     /// Evaluates a range into `values`. Unknowns keep what stands there.
-    pub fn evaluate(&self, range: Range<usize>, inputs: &[f64], values: &mut [f64]) {
+    pub(super) fn evaluate(&self, range: Range<usize>, inputs: &[f64], values: &mut [f64]) {
         for at in range {
             let value = |slot: Slot| values[slot as usize];
             values[at] = match self.ops[at] {
@@ -179,7 +173,7 @@ impl Tape {
     }
 
     /// Carries tangents forward over a range. Tangents of inputs and unknowns keep what stands there.
-    pub fn tangents(&self, range: Range<usize>, values: &[f64], tangents: &mut [f64]) {
+    pub(super) fn tangents(&self, range: Range<usize>, values: &[f64], tangents: &mut [f64]) {
         for at in range {
             if matches!(self.ops[at], Op::Input(_) | Op::Unknown) {
                 continue;
@@ -190,7 +184,7 @@ impl Tape {
     }
 
     /// Carries adjoints backward over a range: adds to what stands in `adjoints`.
-    pub fn adjoints(&self, range: Range<usize>, values: &[f64], adjoints: &mut [f64]) {
+    pub(super) fn adjoints(&self, range: Range<usize>, values: &[f64], adjoints: &mut [f64]) {
         for at in range.rev() {
             let adjoint = adjoints[at];
             if adjoint == 0.0 || matches!(self.ops[at], Op::Input(_) | Op::Unknown | Op::Constant(_)) {
@@ -206,7 +200,7 @@ impl Tape {
 
     /// The size of the terms of every value of a range: what a sum would be if nothing in it cancelled. `least` gives the
     /// size below which an unknown is not taken for small.
-    pub fn magnitudes(&self, range: Range<usize>, values: &[f64], magnitudes: &mut [f64]) {
+    pub(super) fn magnitudes(&self, range: Range<usize>, values: &[f64], magnitudes: &mut [f64]) {
         for at in range {
             let size = |slot: Slot, magnitudes: &[f64]| magnitudes[slot as usize].max(values[slot as usize].abs());
             magnitudes[at] = match self.ops[at] {
