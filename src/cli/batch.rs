@@ -1,6 +1,7 @@
 //! Several sheets through one step, in parallel, with what comes out in the order of the command line.
 
 use std::path::PathBuf;
+use std::time::{Duration, Instant};
 
 use rayon::prelude::*;
 
@@ -9,6 +10,9 @@ use super::sheet_file::SheetFile;
 
 /// Sheets whose results are held at once, for each thread: enough to keep all of them busy, few enough to bound memory.
 const SHEETS_PER_THREAD: usize = 32;
+
+/// A run shorter than this shows no progress.
+const PATIENCE: Duration = Duration::from_secs(1);
 
 /// Stack of a thread, as large as that of the main thread: whether a sheet is too deep must not depend on which thread reads it.
 const STACK_BYTES: usize = 8 * 1024 * 1024;
@@ -31,9 +35,20 @@ pub(crate) fn each_sheet<T: Send>(
         }
         return;
     };
+    let begun = Instant::now();
+    let mut done = 0;
     for some in paths.chunks(threads * SHEETS_PER_THREAD) {
+        let shown = console.progress && begun.elapsed() >= PATIENCE;
+        if shown {
+            console.note(&format!("{done} of {} sheets", paths.len()));
+        }
         let results: Vec<T> = pool.install(|| some.par_iter().with_max_len(1).map(|path| step(SheetFile::read(path))).collect());
+        if shown {
+            // Back to the start of the line, and clear it.
+            console.note("\r\x1b[K");
+        }
         results.into_iter().for_each(|result| show(console, result));
+        done += some.len();
     }
 }
 

@@ -7,7 +7,7 @@ use clap::{Arg, ArgMatches, Command, value_parser};
 
 use super::ExitCode;
 use super::command::{check, completions, explain, gases, man, new, report, schema, solve, template, tidy, units};
-use super::console::{Console, terminal_has_colour};
+use super::console::{Console, notes_go_to_a_terminal, terminal_has_colour};
 
 /// Most threads that may be asked for.
 const MOST_THREADS: i64 = 1_024;
@@ -45,6 +45,7 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
 /// Runs the program with its output going to `console`.
 fn run_on(arguments: impl IntoIterator<Item = OsString>, console: &mut Console) -> ExitCode {
     console.colour = terminal_has_colour();
+    console.progress = notes_go_to_a_terminal();
     let matches = match command().try_get_matches_from(arguments) {
         Ok(matches) => matches,
         Err(error) => return tell(&error, console),

@@ -13,6 +13,8 @@ pub(crate) struct Console {
     pub(crate) colour: bool,
     /// How many threads may work; all cores where `None`.
     pub(crate) threads: Option<usize>,
+    /// Whether people see how far a long run has come: where standard error is a terminal.
+    pub(crate) progress: bool,
     failed: bool,
 }
 
@@ -24,7 +26,7 @@ impl Console {
 
     /// Other streams.
     pub(crate) fn new(results: Box<dyn Write>, notes: Box<dyn Write>) -> Self {
-        Self { results, notes, colour: false, threads: None, failed: false }
+        Self { results, notes, colour: false, threads: None, progress: false, failed: false }
     }
 
     /// Writes a result as it is.
@@ -39,6 +41,12 @@ impl Console {
         if !text.ends_with('\n') {
             self.result("\n");
         }
+    }
+
+    /// Writes out what is held back.
+    pub(crate) fn flush(&mut self) {
+        let written = self.results.flush();
+        self.judge(written);
     }
 
     /// Writes a note for people, after everything that was written before it.
@@ -74,6 +82,11 @@ impl Console {
             let _ = writeln!(self.notes, "gaswright: standard output cannot be written: {error}");
         }
     }
+}
+
+/// Whether standard error is a terminal.
+pub(crate) fn notes_go_to_a_terminal() -> bool {
+    io::stderr().is_terminal()
 }
 
 /// Whether standard error is a terminal that shows colour: not where `NO_COLOR` holds a text, nor where the terminal says

@@ -15,6 +15,7 @@ mod exit_code;
 mod finding_format;
 mod output_file;
 mod sheet_file;
+mod watch;
 
 pub use command_line::run;
 pub use exit_code::ExitCode;

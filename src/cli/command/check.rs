@@ -1,5 +1,7 @@
 //! `gaswright check`: names, dimensions and structure, without results.
 
+use std::path::PathBuf;
+
 use clap::{ArgMatches, Command};
 
 use super::argument::{files, files_of, switch};
@@ -10,6 +12,7 @@ use crate::cli::console::Console;
 use crate::cli::finding_format::{Counts, FindingFormat, FoundIn, SarifRun};
 use crate::cli::output_file;
 use crate::cli::sheet_file::{SheetFile, is_standard_input};
+use crate::cli::watch::{PERIOD, Watched};
 use crate::diagnostic::{Diagnostic, Edit};
 use crate::sheet::Sheet;
 use crate::syntax::Tree;
@@ -27,6 +30,7 @@ pub(in crate::cli) fn command() -> Command {
             "fix",
             "Write the cures that cannot change a meaning into the sheets; of standard input the text goes to standard output",
         ))
+        .arg(switch("watch", "Check again whenever a sheet changes, until stopped"))
 }
 
 /// A sheet that was checked, ready to be shown.
@@ -42,16 +46,39 @@ struct Shown {
 pub(in crate::cli) fn run(matches: &ArgMatches, console: &mut Console) -> ExitCode {
     let format = FindingFormat::of(matches);
     let fix = matches.get_flag("fix");
-    let colour = console.colour;
     let paths = files_of(matches);
     if fix && format != FindingFormat::People && paths.iter().any(|path| is_standard_input(path)) {
         return console.wrong("`--fix` writes the sheet of standard input to standard output, where `--format` would write too");
     }
+    if !matches.get_flag("watch") {
+        return once(console, &paths, format, fix);
+    }
+    if paths.iter().any(|path| is_standard_input(path)) {
+        return console.wrong("`--watch` looks at files again, which standard input is not");
+    }
+    let mut watched = Watched::new(&paths);
+    once(console, &paths, format, fix);
+    console.flush();
+    loop {
+        std::thread::sleep(PERIOD);
+        let changed = watched.changed();
+        if !changed.is_empty() {
+            once(console, &changed, format, fix);
+            console.flush();
+            // What a cure changed is not a change of the writer's.
+            watched.changed();
+        }
+    }
+}
+
+/// Checks the sheets once.
+fn once(console: &mut Console, paths: &[PathBuf], format: FindingFormat, fix: bool) -> ExitCode {
+    let colour = console.colour;
     let mut code = ExitCode::Success;
     let mut counts = Counts::default();
     let mut log = SarifRun::default();
     let step = |read: Result<SheetFile, String>| read.map(|file| check(file, format, fix, colour));
-    each_sheet(console, &paths, step, |console, shown| match shown {
+    each_sheet(console, paths, step, |console, shown| match shown {
         Err(message) => code = code.graver(console.wrong(&message)),
         Ok(shown) => {
             if fix {
