@@ -23,6 +23,7 @@ pub enum Format {
 ///
 /// A template that cannot be read or filled in. Those that ship can.
 pub fn report(input: &Input, format: Format, templates: &Templates) -> Result<String, TemplateError> {
+    let n_statements = input.tree.statements.len();
     let mut draft = Draft::new(input);
     let head = part::head(&draft);
     let answers = part::answers(&mut draft);
@@ -50,12 +51,12 @@ pub fn report(input: &Input, format: Format, templates: &Templates) -> Result<St
         findings => Value::from_serialize(&findings),
         listing => Value::from_serialize(&listing),
     };
-    let text = templates.render("report.md", &context)?;
+    let text = templates.render("report.md", n_statements, &context)?;
     if format == Format::Markdown {
         return Ok(text);
     }
     let head = Value::from_serialize(&head);
-    let css = templates.render("report.css", &context! { head => head, math_font => markdown(math_font()) })?;
+    let css = templates.render("report.css", n_statements, &context! { head => head, math_font => markdown(math_font()) })?;
     let body = body(&text, &draft.formulas, &assumptions.figures);
-    templates.render("report.html", &context! { head => head, css => markdown(css), body => markdown(body) })
+    templates.render("report.html", n_statements, &context! { head => head, css => markdown(css), body => markdown(body) })
 }

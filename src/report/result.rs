@@ -12,6 +12,9 @@ use super::object::{
 };
 use super::{Input, answer_text};
 
+/// Quantities and lines that the step of a block lists at the most: each quantity of the block has the step.
+const MOST_OF_A_BLOCK: usize = 64;
+
 /// The result of a sheet as data.
 #[must_use]
 pub fn result(input: &Input) -> ResultObject {
@@ -82,15 +85,20 @@ impl Maker<'_> {
 
     fn step(&self, at: usize, step: &Step) -> StepObject {
         let sheet = self.input.sheet;
-        let mut lines: Vec<u32> =
-            step.relations.iter().map(|relation| self.input.line(self.lines, sheet.relations[*relation].statement)).collect();
+        let mut lines: Vec<u32> = step
+            .relations
+            .iter()
+            .take(MOST_OF_A_BLOCK)
+            .map(|relation| self.input.line(self.lines, sheet.relations[*relation].statement))
+            .collect();
         lines.sort_unstable();
         lines.dedup();
+        lines.truncate(MOST_OF_A_BLOCK);
         let (method, expression, evaluations, residual) = match step.method {
             Method::ClosedForm { expression } => ("closed form", Some(write_expr(sheet, expression)), None, None),
             Method::Numeric { how, evaluations, residual } => (how, None, Some(evaluations), Some(residual)),
         };
-        let quantities = step.quantities.iter().map(|id| sheet.quantity(*id).name.clone()).collect();
+        let quantities = step.quantities.iter().take(MOST_OF_A_BLOCK).map(|id| sheet.quantity(*id).name.clone()).collect();
         StepObject { number: at + 1, method, expression, quantities, lines, evaluations, residual }
     }
 
@@ -110,7 +118,8 @@ impl Maker<'_> {
     fn states(&self) -> Vec<StateObject> {
         let sheet = self.input.sheet;
         let verdict_of = |id: StateId| self.input.solution.and_then(|solution| solution.states.iter().find(|verdict| verdict.state == id));
-        let states = sheet.states.iter().enumerate();
+        // A state whose gas is in error has none to be told.
+        let states = sheet.states.iter().enumerate().filter(|(_, state)| (state.gas.0 as usize) < sheet.gases.len());
         states
             .map(|(at, state)| {
                 let gas = sheet.gas(state.gas);

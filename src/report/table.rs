@@ -134,7 +134,7 @@ fn section(text: &mut String, title: &str, rows: &[Row]) {
     }
     text.push_str(title);
     text.push('\n');
-    let word_width = rows.iter().map(|row| width(&visible(&row.word))).max().unwrap_or(0).min(WIDTH / 3);
+    let word_width = rows.iter().map(|row| width(&visible(&row.word))).max().unwrap_or(0);
     let whole = rows.iter().map(|row| whole_part(&row.value)).max().unwrap_or(0);
     let rest = rows.iter().map(|row| width(&row.value) - whole_part(&row.value)).max().unwrap_or(0);
     let value_width = whole + rest;

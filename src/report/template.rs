@@ -15,8 +15,11 @@ const BUILT_IN: [(&str, &str); 3] = [
     ("report.css", include_str!("../../templates/report.css")),
 ];
 
-/// Instructions that a template may take: plenty for a sheet of thousands of lines, soon over for an endless loop.
-const FUEL: u64 = 50_000_000;
+/// Instructions that a template may take: plenty for what ships, soon over for an endless loop.
+const FUEL: u64 = 20_000_000;
+
+/// Instructions beyond [`FUEL`] that each statement of a sheet allows.
+const FUEL_OF_A_STATEMENT: u64 = 5_000;
 
 /// The templates that ship with the program: name and text of each.
 pub fn built_in_templates() -> impl Iterator<Item = (&'static str, &'static str)> {
@@ -43,14 +46,14 @@ impl Templates {
         Self { files }
     }
 
-    /// The text of the template `name` with its variables filled in.
-    pub(super) fn render(&self, name: &str, context: &Value) -> Result<String, TemplateError> {
+    /// The text of the template `name` with its variables filled in, for a sheet of so many statements.
+    pub(super) fn render(&self, name: &str, n_statements: usize, context: &Value) -> Result<String, TemplateError> {
         let mut environment = Environment::new();
         environment.set_undefined_behavior(UndefinedBehavior::Strict);
         environment.set_trim_blocks(true);
         environment.set_lstrip_blocks(true);
         environment.set_keep_trailing_newline(true);
-        environment.set_fuel(Some(FUEL));
+        environment.set_fuel(Some(FUEL + FUEL_OF_A_STATEMENT * n_statements as u64));
         environment.set_auto_escape_callback(|name| match name.rsplit('.').next() {
             Some("md") => AutoEscape::Custom("markdown"),
             Some("css") => AutoEscape::Custom("css"),
@@ -134,7 +137,7 @@ mod tests {
     use super::*;
 
     fn render(name: &str, text: &str, context: &Value) -> Result<String, TemplateError> {
-        Templates::from_files(BTreeMap::from([(name.to_owned(), text.to_owned())])).render(name, context)
+        Templates::from_files(BTreeMap::from([(name.to_owned(), text.to_owned())])).render(name, 0, context)
     }
 
     #[test]

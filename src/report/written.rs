@@ -91,6 +91,12 @@ impl Input<'_> {
 
     /// A quantity in a unit, rounded to what it deserves; `None` where it has no value.
     pub(super) fn written(&self, id: QuantityId, shown: &ShownUnit, figures: Option<u32>) -> Option<Written> {
+        let decided = figures.is_some() || self.sheet.head.figures.is_some();
+        let quantity = self.quantity(id);
+        // A count or a definition has no last figure that an input could limit: it stays as it was written.
+        if let Some(reading) = quantity.reading.as_ref().filter(|reading| reading.exact && !decided && *shown == quantity.shown) {
+            return self.si(id).map(|_| Written { number: leading_number(&reading.text).to_owned(), unit: shown.text() });
+        }
         let fineness = self.fineness(id, shown, figures);
         self.written_to(id, shown, fineness)
     }

@@ -30,7 +30,15 @@ fn write(formula: &Formula, out: &mut String) {
         Formula::Power(base, exponent) => {
             held(base, Hold::Atom, out);
             out.push('^');
-            group(out, |out| write(exponent, out));
+            group(out, |out| match exponent.as_ref() {
+                // A built fraction would be too small to read.
+                Formula::Fraction(above, below) => {
+                    held(above, Hold::Product, out);
+                    out.push('/');
+                    held(below, Hold::Power, out);
+                }
+                other => write(other, out),
+            });
         }
         Formula::Root(inner, degree) => {
             out.push_str(if *degree == 3 { "\\sqrt[3]" } else { "\\sqrt" });
@@ -229,7 +237,7 @@ fn write_words(word: &str, parts: &[Formula], out: &mut String) {
             text(&format!(" {word} "), out);
         }
         match part {
-            Formula::Words(other, inner) if *other != word || inner.len() == 1 => held(part, Hold::Sum, out),
+            Formula::Words(other, inner) if *other != word && inner.len() > 1 => held(part, Hold::Sum, out),
             _ => write(part, out),
         }
     }
@@ -262,6 +270,15 @@ mod tests {
     }
 
     #[test]
+    fn exponents_lie_flat() {
+        let one_less = Formula::Sum(vec![(false, symbol("k")), (true, value("1", ""))]);
+        let exponent = Formula::Fraction(Box::new(symbol("k")), Box::new(one_less));
+        let power = Formula::Power(Box::new(symbol("r")), Box::new(exponent));
+        assert_eq!(latex(&power), r"$r^{k/\left(k - 1\right)}$");
+        assert!(mathml(&power).contains(r#"<mi>k</mi><mo lspace="0" rspace="0">/</mo><mrow><mo stretchy="false">(</mo>"#));
+    }
+
+    #[test]
     fn a_cross_stands_before_numbers_and_behind_units() {
         let product = Formula::Product(vec![value("2", ""), symbol("V"), symbol("full.rho")]);
         assert_eq!(latex(&product), r"$2\thinspace V\thinspace \rho_{\text{full}}$");
@@ -282,7 +299,7 @@ mod tests {
             mathml(&formula),
             concat!(
                 r#"<math displaystyle="true"><mrow><msub><mi>c</mi><mrow><mi>p</mi><mo separator="true" lspace="0" rspace=".1em">,</mo>"#,
-                r#"<mtext>cold</mtext></mrow></msub><mo>≥</mo><mrow><msub><mtext>log</mtext><mn>10</mn></msub><mrow><mo>(</mo>"#,
+                r#"<mtext>cold</mtext></mrow></msub><mo>≥</mo><mrow><msub><mi>log</mi><mn>10</mn></msub><mrow><mo>(</mo>"#,
                 r#"<mroot><mrow><mn>1.2</mn><mo>×</mo><msup><mn>10</mn><mn>−6</mn></msup><mspace width=".2em"/><mtext>%</mtext></mrow>"#,
                 r#"<mn>3</mn></mroot><mo>)</mo></mrow></mrow></mrow></math>"#
             )

@@ -11,9 +11,18 @@ const UNIT_SPACE: &str = r#"<mspace width=".2em"/>"#;
 /// Between two factors.
 const FACTOR_SPACE: &str = r#"<mspace width=".167em"/>"#;
 
+/// Widths in em from which a formula, which cannot be broken further, is set smaller on paper.
+const WIDE: f64 = 40.0;
+const WIDER: f64 = 56.0;
+
 /// A formula as a `math` element.
 pub(in crate::report) fn mathml(formula: &Formula) -> String {
-    let mut out = String::from(r#"<math displaystyle="true">"#);
+    let class = match formula.width() {
+        width if width > WIDER => r#" class="wider""#,
+        width if width > WIDE => r#" class="wide""#,
+        _ => "",
+    };
+    let mut out = format!(r#"<math displaystyle="true"{class}>"#);
     write(formula, &mut out);
     out.push_str("</math>");
     out
@@ -31,7 +40,7 @@ fn write(formula: &Formula, out: &mut String) {
         }),
         Formula::Power(base, exponent) => element("msup", out, |out| {
             held(base, Hold::Atom, out);
-            write(exponent, out);
+            write_exponent(exponent, out);
         }),
         Formula::Root(inner, 3) => element("mroot", out, |out| {
             write(inner, out);
@@ -100,11 +109,24 @@ fn held(formula: &Formula, least: Hold, out: &mut String) {
     }
 }
 
+/// An exponent; a fraction in it lies flat, because a built one would be too small to read.
+fn write_exponent(exponent: &Formula, out: &mut String) {
+    match exponent {
+        Formula::Fraction(above, below) => row(out, |out| {
+            held(above, Hold::Product, out);
+            out.push_str(r#"<mo lspace="0" rspace="0">/</mo>"#);
+            held(below, Hold::Power, out);
+        }),
+        other => write(other, out),
+    }
+}
+
 fn write_symbol(symbol: &Symbol, out: &mut String) {
     let base = |out: &mut String| {
         let letter = |out: &mut String| match symbol.is_letter() {
             true => element("mi", out, |out| escape(&symbol.base, out)),
-            false => element("mtext", out, |out| escape(&symbol.base, out)),
+            // A word of several letters is set upright. It is no `mtext`, which would take the space from the sign behind it.
+            false => element("mi", out, |out| escape(&symbol.base, out)),
         };
         if symbol.delta {
             row(out, |out| {
@@ -193,12 +215,12 @@ fn write_product(factors: &[Formula], out: &mut String) {
 
 fn write_function_word(word: &str, out: &mut String) {
     match word {
-        "log10" => out.push_str("<msub><mtext>log</mtext><mn>10</mn></msub>"),
-        "asin" | "acos" | "atan" => element("mtext", out, |out| {
+        "log10" => out.push_str("<msub><mi>log</mi><mn>10</mn></msub>"),
+        "asin" | "acos" | "atan" => element("mi", out, |out| {
             out.push_str("arc");
             out.push_str(&word[1..]);
         }),
-        other => element("mtext", out, |out| escape(other, out)),
+        other => element("mi", out, |out| escape(other, out)),
     }
 }
 
@@ -233,7 +255,7 @@ fn write_words(word: &str, parts: &[Formula], out: &mut String) {
             text(out, format!("{NO_BREAK}{word}{NO_BREAK}"));
         }
         match part {
-            Formula::Words(other, inner) if *other != word || inner.len() == 1 => held(part, Hold::Sum, out),
+            Formula::Words(other, inner) if *other != word && inner.len() > 1 => held(part, Hold::Sum, out),
             _ => write(part, out),
         }
     }

@@ -178,7 +178,23 @@ fn sum(left: Formula, minus: bool, right: Formula) -> Formula {
     Formula::Sum(terms)
 }
 
+/// A formula without the minus sign before the whole of it, and whether it had one.
+fn without_sign(formula: Formula) -> (bool, Formula) {
+    match formula {
+        Formula::Sum(mut terms) if terms.len() == 1 && terms[0].0 => (true, terms.remove(0).1),
+        Formula::Value(Written { number, unit }) if unit.is_empty() && number.starts_with(['-', '−']) => {
+            (true, Formula::Value(Written { number: number.trim_start_matches(['-', '−']).to_owned(), unit }))
+        }
+        other => (false, other),
+    }
+}
+
 fn product(left: Formula, right: Formula) -> Formula {
+    // `-2 * x` is read as `-(2 * x)`, which is the same and needs no brackets.
+    let (minus, left) = without_sign(left);
+    if minus {
+        return Formula::Sum(vec![(true, product(left, right))]);
+    }
     let mut factors = match left {
         Formula::Product(factors) => factors,
         other => vec![other],
@@ -191,6 +207,10 @@ fn product(left: Formula, right: Formula) -> Formula {
 }
 
 fn quotient(left: Formula, right: Formula) -> Formula {
+    let (minus, left) = without_sign(left);
+    if minus {
+        return Formula::Sum(vec![(true, quotient(left, right))]);
+    }
     match left {
         // `a / b / c` is one fraction.
         Formula::Fraction(above, below) => Formula::Fraction(above, Box::new(product(*below, right))),
@@ -200,7 +220,7 @@ fn quotient(left: Formula, right: Formula) -> Formula {
 
 fn power(base: Formula, exponent: Formula, value: Option<f64>) -> Formula {
     match value {
-        Some(value) if value == 0.5 => Formula::Root(Box::new(base), 2),
+        Some(0.5) => Formula::Root(Box::new(base), 2),
         Some(value) if value == 1.0 / 3.0 => Formula::Root(Box::new(base), 3),
         _ => Formula::Power(Box::new(base), Box::new(exponent)),
     }

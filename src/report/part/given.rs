@@ -84,11 +84,13 @@ fn references(draft: &Draft) -> Vec<Given> {
         };
         let Some(conditions) = conditions.filter(|conditions| conditions.statement == at) else { continue };
         let source = statement.source.as_ref().map_or(String::new(), |text| text.text.clone());
-        let written = |value: f64, unit: &str| Written { number: without_end_zeros(&write_figures(value, 6)), unit: unit.to_owned() }.typeset();
+        let written =
+            |value: f64, unit: &str| Written { number: without_end_zeros(&write_figures(value, 6)), unit: unit.to_owned() }.typeset();
         let line = Some(draft.line(at));
-        for (word, literal, si) in
-            [("temperature", temperature, written(conditions.t_k, "K")), ("pressure", pressure, written(conditions.p_pa / 1000.0, "kPa abs"))]
-        {
+        for (word, literal, si) in [
+            ("temperature", temperature, written(conditions.t_k, "K")),
+            ("pressure", pressure, written(conditions.p_pa / 1000.0, "kPa abs")),
+        ] {
             rows.push(Given {
                 anchor: String::new(),
                 symbol: markdown(""),

@@ -5,7 +5,7 @@ use std::collections::{BTreeMap, BinaryHeap};
 
 use crate::report::draft::Draft;
 use crate::report::formula::{Formula, Put};
-use crate::sheet::{ExprId, QuantityId, RelationOrigin, StateId};
+use crate::sheet::{ExprId, Origin, QuantityId, RelationOrigin, StateId};
 use crate::solve::{Method, Step};
 
 /// The steps in an order in which they can be followed and which keeps that of the sheet as far as it can, each with the statement
@@ -65,7 +65,8 @@ pub(super) fn fixed_state(draft: &Draft, step: &Step) -> Option<StateId> {
     else {
         return None;
     };
-    is_plain(draft, *expression).then_some(state)
+    let own = |id: &QuantityId| matches!(draft.input.quantity(*id).origin, Origin::Property(owner, _) if owner == state);
+    (step.quantities.iter().all(own) && is_plain(draft, *expression)).then_some(state)
 }
 
 /// Whether an expression is a quantity or a number as it stands.

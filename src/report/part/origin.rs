@@ -2,40 +2,78 @@
 
 use super::answer::emphasis;
 use crate::report::draft::Draft;
-use crate::report::formula::Put;
+use crate::report::formula::{Formula, Put};
 use crate::report::markdown::escape;
-use crate::sheet::{Expr, ExprId, Property, QuantityId, Relation, RelationOrigin};
+use crate::sheet::{Expr, ExprId, GasId, Property, QuantityId, Relation, RelationOrigin};
 use crate::solve::Step;
 
-/// Which relation a closed form comes from, where its first row does not say it already.
-pub(super) fn origin(draft: &mut Draft, step: &Step, expression: ExprId) -> String {
+/// Width in em above which a relation is not set within a sentence.
+const WIDEST_IN_A_SENTENCE: f64 = 18.0;
+
+/// Which relation a closed form comes from, where its first row does not say it already; and that relation as written, where it
+/// needs a row of its own.
+pub(super) fn origin(draft: &mut Draft, step: &Step, expression: ExprId) -> (String, Option<Formula>) {
     let input = draft.input;
     let (Some(id), Some(relation)) =
         (step.quantities.first(), step.relations.first().and_then(|relation| input.sheet.relations.get(*relation)))
     else {
-        return String::new();
+        return (String::new(), None);
     };
-    let rearranged = is_rearranged(draft, relation, *id, expression);
     let name = relation_name(draft, relation);
-    let mut text = name.clone();
-    if rearranged {
-        let formula = draft.math(&draft.relation(relation));
+    let mut sentences = Vec::new();
+    let mut row = None;
+    if is_rearranged(draft, relation, *id, expression) {
+        let formula = draft.relation(relation);
         let symbol = draft.set_symbol(*id);
         let name = if name.is_empty() { format!("Relation of line {}", draft.line(relation.statement)) } else { name };
-        text = format!("{name}: {formula}, solved for {symbol}");
+        if formula.is_tall() || formula.width() > WIDEST_IN_A_SENTENCE {
+            sentences.push(format!("{name}, first line, solved for {symbol}"));
+            row = Some(formula);
+        } else {
+            sentences.push(format!("{name}: {}, solved for {symbol}", draft.math(&formula)));
+        }
+    } else if !name.is_empty() {
+        sentences.push(name);
     }
-    let statement =
-        input.tree.statements.get(relation.statement).filter(|_| matches!(relation.origin, RelationOrigin::Line | RelationOrigin::Let));
-    let mut add = |words: String| {
-        text = if text.is_empty() { words } else { format!("{text}; {words}") };
-    };
-    if let Some(because) = statement.and_then(|statement| statement.because.as_ref()) {
-        add(format!("because {}", escape(&because.text)));
+    sentences.extend(grounds(draft, relation));
+    (closed(&sentences), row)
+}
+
+/// The names and grounds of the relations of a block.
+pub(super) fn origins(draft: &Draft, step: &Step) -> String {
+    let mut sentences: Vec<String> = Vec::new();
+    for relation in step.relations.iter().filter_map(|relation| draft.input.sheet.relations.get(*relation)) {
+        for sentence in Some(relation_name(draft, relation)).filter(|name| !name.is_empty()).into_iter().chain(grounds(draft, relation)) {
+            if !sentences.contains(&sentence) {
+                sentences.push(sentence);
+            }
+        }
     }
-    if let Some(source) = statement.and_then(|statement| statement.source.as_ref()) {
-        add(format!("source: {}", escape(&source.text)));
-    }
-    if text.is_empty() { text } else { text + "." }
+    closed(&sentences)
+}
+
+/// Why a relation holds and where it stands, as its line says.
+fn grounds(draft: &Draft, relation: &Relation) -> Vec<String> {
+    let stated = matches!(relation.origin, RelationOrigin::Line | RelationOrigin::Let);
+    let Some(statement) = draft.input.tree.statements.get(relation.statement).filter(|_| stated) else { return Vec::new() };
+    let because = statement.because.as_ref().map(|text| format!("Because: {}", escape(&text.text)));
+    let source = statement.source.as_ref().map(|text| format!("Source: {}", escape(&text.text)));
+    because.into_iter().chain(source).collect()
+}
+
+/// Sentences, each with its full stop.
+fn closed(sentences: &[String]) -> String {
+    sentences.iter().map(|sentence| format!("{}.", sentence.trim_end_matches('.'))).collect::<Vec<_>>().join(" ")
+}
+
+/// Characters of the title of a gas above which its name in the sheet stands for it.
+const LONGEST_TITLE: usize = 32;
+
+/// What a gas is called in a sentence.
+pub(super) fn gas_title(draft: &Draft, gas: GasId) -> String {
+    let gas = draft.input.sheet.gas(gas);
+    let title = gas.gas.title();
+    if title.chars().count() > LONGEST_TITLE { gas.name.clone() } else { title }
 }
 
 /// The name of a relation, for a sentence that begins with it.
@@ -50,7 +88,7 @@ fn relation_name(draft: &Draft, relation: &Relation) -> String {
         RelationOrigin::At(state, _) => format!("What the line of state {} fixes", emphasis(&input.sheet.state(state).name)),
         RelationOrigin::Law(state, property) => {
             let state = input.sheet.state(state);
-            let gas = input.sheet.gas(state.gas).gas.title();
+            let gas = gas_title(draft, state.gas);
             match property {
                 Property::H | Property::U | Property::S | Property::Cp | Property::Cv | Property::K | Property::W => {
                     format!("Ideal-gas {} of {} (source under States)", property.row().word, escape(&gas))

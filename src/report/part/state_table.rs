@@ -85,6 +85,8 @@ fn table(draft: &mut Draft, gas: GasId, states: &[StateId], columns: &[(Property
             };
             Row { name: state.name.clone(), values: columns.iter().map(value).collect(), line: draft.line(state.statement) }
         })
+        // Of a second table a state that has none of its properties is no part.
+        .filter(|row: &Row| row.values.iter().any(|value| !value.is_empty()))
         .collect();
     StateTable { gas: input.sheet.gas(gas).gas.title(), columns: heads, rows, model: markdown(model) }
 }

@@ -7,7 +7,7 @@ use super::answer::emphasis;
 use super::given::described;
 use super::narration::narrate;
 use super::order::{fixed_state, grouped, is_plain, uses};
-use super::origin::{origin, with};
+use super::origin::{gas_title, origin, origins, with};
 use crate::report::draft::{Draft, markdown};
 use crate::report::formula::{Formula, Put};
 use crate::report::markdown::escape;
@@ -15,7 +15,6 @@ use crate::report::table::{count, residual};
 use crate::report::typeset::{typeset_number, typeset_unit};
 use crate::sheet::{Expr, ExprId, Origin, Property, QuantityId, StateId};
 use crate::solve::{Method, Step};
-use crate::units::ReferenceVolume;
 
 /// An entry of the working.
 #[derive(Clone, Debug, Serialize)]
@@ -55,9 +54,6 @@ pub(in crate::report) struct Row {
 
 /// Room for a line of a formula in em: what a page of A4 has beside the left side.
 const ROOM: f64 = 34.0;
-
-/// Characters of the title of a gas above which its name in the sheet stands for it.
-const LONGEST_TITLE: usize = 32;
 
 /// The working of a solved sheet.
 pub(in crate::report) fn working(draft: &mut Draft) -> Vec<Entry> {
@@ -111,8 +107,14 @@ fn entry(draft: &mut Draft, steps: &[&Step]) -> Entry {
     let used = uses(draft, step);
     let origin = match &step.method {
         Method::ClosedForm { expression } => {
+            let (origin, relation) = origin(draft, step, *expression);
+            if let Some(Formula::Chain(left, right)) = relation
+                && let Some((sign, right)) = right.into_iter().next()
+            {
+                push_lines(draft, &Formula::Opening(Some(left), sign), right, &mut rows);
+            }
             closed_rows(draft, step, *expression, &mut rows);
-            origin(draft, step, *expression)
+            origin
         }
         Method::Numeric { how, evaluations, residual: left } => {
             numeric_rows(draft, step, &mut rows);
@@ -121,11 +123,12 @@ fn entry(draft: &mut Draft, steps: &[&Step]) -> Entry {
             } else {
                 format!("{} solved together", count(step.relations.len(), "relation"))
             };
-            format!(
+            let how = format!(
                 "{what} by {how} in {}; largest scaled residual {}.",
                 count(*evaluations as usize, "evaluation"),
                 typeset_number(&residual(*left))
-            )
+            );
+            [origins(draft, step), how].join(" ").trim_start().to_owned()
         }
     };
     let from = [origin, with(draft, &used), reference(draft, step)]
@@ -139,24 +142,17 @@ fn entry(draft: &mut Draft, steps: &[&Step]) -> Entry {
 /// Which reference conditions a result counts by.
 fn reference(draft: &Draft, step: &Step) -> String {
     let input = draft.input;
-    let counted = step.quantities.iter().flat_map(|id| &input.quantity(*id).shown.unit.references).map(|(which, _)| *which);
-    let mut sentences: Vec<String> = Vec::new();
-    for which in counted {
-        let conditions = match which {
-            ReferenceVolume::Normal => input.sheet.references[0],
-            ReferenceVolume::Standard => input.sheet.references[1],
-            ReferenceVolume::Scf => input.sheet.references[2].or(input.sheet.references[1]),
-        };
-        if let Some(conditions) = conditions {
-            let line = draft.line(conditions.statement);
-            sentences.push(format!(
-                "One {} is *p V*/(*R T*) at the reference conditions of [line {line}](#line-{line}).",
-                typeset_unit(which.word())
-            ));
-        }
-    }
-    sentences.dedup();
-    sentences.join(" ")
+    let [normal, standard, scf] = input.sheet.references;
+    let known = [("Nm3", normal), ("Sm3", standard), ("scf", scf.or(standard))];
+    let counts = |word: &str| {
+        let names = step.quantities.iter().map(|id| &input.quantity(*id).shown.unit.name);
+        names.flat_map(|name| name.split(|c: char| !c.is_ascii_alphanumeric())).any(|part| part == word)
+    };
+    let sentences = known.iter().filter(|(word, _)| counts(word)).filter_map(|(word, conditions)| {
+        let line = draft.line((*conditions)?.statement);
+        Some(format!("One {} is *p V*/(*R T*) at the reference conditions of [line {line}](#line-{line}).", typeset_unit(word)))
+    });
+    sentences.collect::<Vec<_>>().join(" ")
 }
 
 /// `p_full = p_1 = 10.61 bar abs`, one row a property.
@@ -200,9 +196,7 @@ fn quantity_title(draft: &mut Draft, id: QuantityId) -> String {
 
 fn property_title(draft: &Draft, state: StateId, property: Property) -> String {
     let state = draft.input.sheet.state(state);
-    let gas = draft.input.sheet.gas(state.gas);
-    let title = gas.gas.title();
-    let gas = if title.chars().count() > LONGEST_TITLE { gas.name.clone() } else { title };
+    let gas = gas_title(draft, state.gas);
     let word = property.row().word;
     let word = word.chars().next().map_or_else(String::new, |first| first.to_uppercase().chain(word.chars().skip(1)).collect::<String>());
     format!("{word} of {} at state {}", escape(&gas), emphasis(&state.name))
@@ -272,15 +266,14 @@ fn result(draft: &Draft, id: QuantityId) -> String {
     for written in own.into_iter().chain(answers) {
         let text = escape(&written.typeset());
         if !stated.iter().any(|(other, _)| *other == text) {
-            // Another basis or another zero: the two numbers are the same value and look as if they were not.
-            stated.push((text, written.unit.ends_with("gauge") || matches!(written.unit.as_str(), "degC" | "degF")));
+            stated.push((text, written.unit == carried.unit));
         }
     }
     let carried = escape(&carried.typeset());
     let mut text = if stated.iter().any(|(other, _)| *other == carried) { String::new() } else { carried };
-    for (stated, shifted) in &stated {
+    for (stated, same_unit) in &stated {
         if !text.is_empty() {
-            text.push_str(if *shifted { ", that is " } else { " ≈ " });
+            text.push_str(if *same_unit { " ≈ " } else { ", that is " });
         }
         text.push_str(&format!("**{stated}**"));
     }
