@@ -21,7 +21,9 @@ fn stages(criterion: &mut Criterion) {
         let (tree, _) = syntax::parse(text);
         group.bench_function("sheet", |bencher| bencher.iter(|| sheet::read(black_box(&tree), text)));
         let (read, _) = sheet::read(&tree, text);
-        group.bench_function("solve", |bencher| bencher.iter_batched(|| read.clone(), |mut sheet| solve::solve(&mut sheet), BatchSize::SmallInput));
+        group.bench_function("solve", |bencher| {
+            bencher.iter_batched(|| read.clone(), |mut sheet| solve::solve(&mut sheet), BatchSize::SmallInput)
+        });
         group.bench_function("whole way", |bencher| bencher.iter(|| gaswright::solve(black_box(text))));
         let solved = gaswright::solve(text);
         let input = Input {

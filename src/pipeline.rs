@@ -2,7 +2,7 @@
 
 use sha2::{Digest, Sha256};
 
-use crate::diagnostic::{Diagnostic, finding};
+use crate::diagnostic::{Diagnostic, code, finding};
 use crate::sheet::{self, Sheet};
 use crate::solve::{self, Solution, Verdict};
 use crate::syntax::{self, StatementKind, Tree};
@@ -65,7 +65,7 @@ pub fn check(text: &str) -> Checked {
     let (sheet, more) = sheet::read(&tree, text);
     findings.extend(more);
     findings.extend(solve::check(&sheet));
-    finding::sort(&mut findings);
+    settle(&mut findings);
     let digest = digest(&tree, text);
     Checked { tree, sheet, findings, digest }
 }
@@ -85,9 +85,18 @@ pub fn solve(text: &str) -> Solved {
         findings.extend(solve::check(&sheet));
         None
     };
-    finding::sort(&mut findings);
+    settle(&mut findings);
     let digest = digest(&tree, text);
     Solved { tree, sheet, solution, findings, digest }
+}
+
+/// Puts findings in the order of the text. Beside an error, that something is used by nothing may be its shadow and is not
+/// told.
+fn settle(findings: &mut Vec<Diagnostic>) {
+    if findings.iter().any(Diagnostic::is_error) {
+        findings.retain(|finding| finding.code != code::unused_input::CODE);
+    }
+    finding::sort(findings);
 }
 
 /// The digest of what a sheet says: of its head and of the canonical text of its statements. Layout, comments and the order

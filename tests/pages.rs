@@ -3,7 +3,7 @@
 use gaswright::diagnostic::{Diagnostic, code};
 
 /// Codes of bytes that a page cannot hold, and of sheets too large for one.
-const WITHOUT_SHEET: &[&str] = &["not-utf8"];
+const WITHOUT_SHEET: &[&str] = &["not-utf8", "too-long", "too-many", "too-many-errors"];
 
 /// The blocks of a page whose fence says `mark`.
 fn blocks(page: &str, mark: &str) -> Vec<String> {

@@ -18,7 +18,9 @@ fn usual_slip(left: Dimension, right: Dimension) -> Option<&'static str> {
     let ratio = left.per(right)?;
     let is = |factor: Dimension| ratio == factor || Dimension::NONE.per(factor) == Some(ratio);
     if is(Dimension::TIME) {
-        Some("they differ by a time: an amount stands for a flow (`L` for `L/min`, `kg` for `kg/h`) or an energy for a power (`kJ` for `kW`)")
+        Some(
+            "they differ by a time: an amount stands for a flow (`L` for `L/min`, `kg` for `kg/h`) or an energy for a power (`kJ` for `kW`)",
+        )
     } else if is(Dimension::MOLAR_MASS) {
         Some("they differ by a molar mass: `R` is per mole, a gas has its own constant (`n2.R`); `mol` and `kg` need `n2.M` between them")
     } else if is(Dimension::TEMPERATURE) {
@@ -34,8 +36,9 @@ fn usual_slip(left: Dimension, right: Dimension) -> Option<&'static str> {
 #[derive(Clone, Copy, Debug)]
 struct Measure {
     dimension: Dimension,
-    /// `None` where the count cannot be told: a part may be of either kind, or has a factor of its own.
-    count: Option<f64>,
+    /// The least and the most that it may count: they differ where a part may be of either kind. `None` where a part has a
+    /// factor of its own.
+    count: Option<(f64, f64)>,
     /// A gauge reading is among the terms.
     gauge: bool,
     /// How many absolute values are among the terms.
@@ -49,9 +52,10 @@ impl Measure {
 
     fn of_kind(dimension: Dimension, kind: Kind, gauge: bool) -> Self {
         let (count, absolutes) = match kind {
-            Kind::Absolute => (Some(1.0), 1),
-            Kind::Difference => (Some(0.0), 0),
-            Kind::Plain | Kind::Either => (None, 0),
+            Kind::Absolute => (Some((1.0, 1.0)), 1),
+            Kind::Difference => (Some((0.0, 0.0)), 0),
+            Kind::Either => (Some((0.0, 1.0)), 0),
+            Kind::Plain => (None, 0),
         };
         Self { dimension, count, gauge, absolutes }
     }
@@ -68,7 +72,7 @@ impl Measure {
 }
 
 impl Reader<'_> {
-    /// The kind of every `let` without a unit, from its expression.
+    /// The kind of every `let` whose unit does not say it, from its expression.
     pub(super) fn infer_kinds(&mut self) {
         let mut defined: Vec<Option<ExprId>> = vec![None; self.sheet.quantities.len()];
         let mut open: Vec<QuantityId> = Vec::new();
@@ -76,7 +80,6 @@ impl Reader<'_> {
             if relation.origin == RelationOrigin::Let
                 && let Expr::Quantity(id) = self.sheet.exprs.get(relation.left)
                 && self.sheet.quantity(id).kind == Kind::Either
-                && self.sheet.quantity(id).shown.unit.name.is_empty()
             {
                 defined[id.0 as usize] = Some(relation.right);
                 open.push(id);
@@ -140,7 +143,9 @@ impl Reader<'_> {
         let (Ok(left), Ok(right)) = (left, right) else { return false };
         if left.dimension != right.dimension {
             let mut finding = self.relation_mismatch(relation, &left, &right);
-            if let Some(slip) = usual_slip(left.dimension, right.dimension) {
+            if left.dimension.is_none() || right.dimension.is_none() {
+                finding = code::dimension_mismatch::bare_number(finding);
+            } else if let Some(slip) = usual_slip(left.dimension, right.dimension) {
                 finding = finding.fact(slip);
             }
             let finding = self.with_provenance(finding, &[relation.left, relation.right]);
@@ -169,7 +174,12 @@ impl Reader<'_> {
             }
             _ => {
                 let (left_text, right_text) = (format!("`{}`", self.words(relation.left)), format!("`{}`", self.words(relation.right)));
-                code::dimension_mismatch::terms(relation.span, "relation", (left_span, &left_text, &wanted), (right_span, &right_text, &found))
+                code::dimension_mismatch::terms(
+                    relation.span,
+                    "relation",
+                    (left_span, &left_text, &wanted),
+                    (right_span, &right_text, &found),
+                )
             }
         }
     }
@@ -197,13 +207,15 @@ impl Reader<'_> {
         }
         for id in seen.into_iter().take(MOST) {
             let quantity = self.sheet.quantity(id);
-            if matches!(quantity.origin, Origin::Given | Origin::Unknown | Origin::Let) && finding.related.iter().all(|label| label.span != quantity.span) {
+            if matches!(quantity.origin, Origin::Given | Origin::Unknown | Origin::Let)
+                && finding.related.iter().all(|label| label.span != quantity.span)
+            {
                 let inferred = quantity.shown.unit.name.is_empty() && quantity.reading.is_none();
                 let from = if inferred { self.forced_by(id) } else { None };
                 let dimension = quantity.dimension.describe();
                 finding = match from {
                     Some(span) => finding.related(span, format!("`{}` gets its dimension, {dimension}, from here", quantity.name)),
-                    None => finding.related(quantity.span, format!("`{}` is a {dimension}", quantity.name)),
+                    None => finding.related(quantity.span, format!("`{}` is {}", quantity.name, code::a(&dimension))),
                 };
             }
         }
@@ -212,7 +224,11 @@ impl Reader<'_> {
 
     /// The first relation in which a quantity stands as the only one that no line gives a unit.
     fn forced_by(&self, id: QuantityId) -> Option<Span> {
-        self.sheet.relations.iter().find(|relation| self.sheet.exprs.mentions(relation.left, id) || self.sheet.exprs.mentions(relation.right, id)).map(|relation| relation.span)
+        self.sheet
+            .relations
+            .iter()
+            .find(|relation| self.sheet.exprs.mentions(relation.left, id) || self.sheet.exprs.mentions(relation.right, id))
+            .map(|relation| relation.span)
     }
 
     /// Whether the two sides are of one kind, told where not.
@@ -230,17 +246,24 @@ impl Reader<'_> {
 
     /// What a whole side counts: 1 for an absolute value, 0 for a difference, `None` where it is not judged.
     fn whole(&mut self, measure: &Measure, expr: ExprId) -> Result<Option<f64>, ()> {
-        let (Some(word), Some(count)) = (measure.word(), measure.count) else { return Ok(None) };
-        let near = |to: f64| (count - to).abs() < COUNT_TOLERANCE;
+        let (Some(word), Some((least, most))) = (measure.word(), measure.count) else { return Ok(None) };
+        let may_be = |count: f64| {
+            // What may be of either kind moves the count in whole steps.
+            let steps = (count - least).round();
+            count >= least - COUNT_TOLERANCE && count <= most + COUNT_TOLERANCE && (least + steps - count).abs() < COUNT_TOLERANCE
+        };
         // Absolute pressures alone may be added, as partial pressures are.
         let judged = word == "temperature" || measure.gauge;
-        if near(0.0) || near(1.0) {
-            return Ok((judged || measure.absolutes <= 1).then_some(count.round()));
+        match (may_be(0.0), may_be(1.0)) {
+            (true, true) => return Ok(None),
+            (true, false) => return Ok((judged || measure.absolutes <= 1).then_some(0.0)),
+            (false, true) => return Ok((judged || measure.absolutes <= 1).then_some(1.0)),
+            (false, false) => {}
         }
         if !judged {
             return Ok(None);
         }
-        let written = crate::units::write_to_place(count, -3);
+        let written = crate::units::write_to_place(if least > 1.0 { least } else { most }, -3);
         let written = if written.contains('.') { written.trim_end_matches('0').trim_end_matches('.') } else { &written };
         let finding = code::kind_mismatch::sum(self.place(expr), word, written);
         self.report(finding);
@@ -269,7 +292,7 @@ impl Reader<'_> {
             }
             Expr::Negate(inner) => {
                 let inner = self.measure(inner)?;
-                Ok(Measure { count: inner.count.map(|count| -count), ..inner })
+                Ok(Measure { count: inner.count.map(|(least, most)| (-most, -least)), ..inner })
             }
             Expr::Binary(op, a, b) => self.measure_binary(id, op, a, b),
             Expr::Call(function, a, b) => self.measure_call(id, function, a, b),
@@ -295,9 +318,15 @@ impl Reader<'_> {
                     let (left_text, right_text) = (format!("`{}`", self.words(a)), format!("`{}`", self.words(b)));
                     let (left_dimension, right_dimension) = (left.dimension.describe(), right.dimension.describe());
                     let place = if op == BinaryOp::Add { "sum" } else { "difference" };
-                    let mut finding =
-                        code::dimension_mismatch::terms(span, place, (self.place(a), &left_text, &left_dimension), (self.place(b), &right_text, &right_dimension));
-                    if [a, b].into_iter().any(|side| matches!(self.sheet.exprs.get(side), Expr::Number(..))) && (left.dimension.is_none() || right.dimension.is_none()) {
+                    let mut finding = code::dimension_mismatch::terms(
+                        span,
+                        place,
+                        (self.place(a), &left_text, &left_dimension),
+                        (self.place(b), &right_text, &right_dimension),
+                    );
+                    if [a, b].into_iter().any(|side| matches!(self.sheet.exprs.get(side), Expr::Number(..)))
+                        && (left.dimension.is_none() || right.dimension.is_none())
+                    {
                         finding = code::dimension_mismatch::bare_number(finding);
                     }
                     if let Some(slip) = usual_slip(left.dimension, right.dimension) {
@@ -310,12 +339,19 @@ impl Reader<'_> {
                     self.report(finding);
                     return Err(());
                 }
-                let sign = if op == BinaryOp::Add { 1.0 } else { -1.0 };
-                let count = left.count.zip(right.count).map(|(left, right)| left + sign * right);
-                Ok(Measure { dimension: left.dimension, count, gauge: left.gauge || right.gauge, absolutes: left.absolutes + right.absolutes })
+                let count = left.count.zip(right.count).map(|(left, right)| {
+                    if op == BinaryOp::Add { (left.0 + right.0, left.1 + right.1) } else { (left.0 - right.1, left.1 - right.0) }
+                });
+                Ok(Measure {
+                    dimension: left.dimension,
+                    count,
+                    gauge: left.gauge || right.gauge,
+                    absolutes: left.absolutes + right.absolutes,
+                })
             }
             BinaryOp::Multiply | BinaryOp::Divide => {
-                let dimension = if op == BinaryOp::Multiply { left.dimension.times(right.dimension) } else { left.dimension.per(right.dimension) };
+                let dimension =
+                    if op == BinaryOp::Multiply { left.dimension.times(right.dimension) } else { left.dimension.per(right.dimension) };
                 let Some(dimension) = dimension else {
                     beyond(self);
                     return Err(());
@@ -323,10 +359,17 @@ impl Reader<'_> {
                 let is_sum = |expr: ExprId| matches!(self.sheet.exprs.get(expr), Expr::Binary(BinaryOp::Add | BinaryOp::Subtract, ..));
                 let (sum, factor) = match (constant_value(&self.sheet, a), constant_value(&self.sheet, b)) {
                     (Some(factor), None) if op == BinaryOp::Multiply && left.dimension.is_none() && is_sum(b) => (right, factor),
-                    (None, Some(factor)) if right.dimension.is_none() && is_sum(a) => (left, if op == BinaryOp::Multiply { factor } else { 1.0 / factor }),
+                    (None, Some(factor)) if right.dimension.is_none() && is_sum(a) => {
+                        (left, if op == BinaryOp::Multiply { factor } else { 1.0 / factor })
+                    }
                     _ => return Ok(Measure::of(dimension)),
                 };
-                Ok(Measure { dimension, count: sum.count.map(|count| count * factor), ..sum })
+                // Between the ends of a range that is stretched not every step is met: only a certain count is carried on.
+                Ok(Measure {
+                    dimension,
+                    count: sum.count.filter(|(least, most)| least == most).map(|(count, _)| (count * factor, count * factor)),
+                    ..sum
+                })
             }
             BinaryOp::Power => {
                 if !right.dimension.is_none() {
@@ -363,13 +406,18 @@ impl Reader<'_> {
                 let finding = code::power_too_high::expression(self.place(id));
                 self.report(finding);
             }),
-            (Function::Abs, _) => Ok(Measure { count: first.count.filter(|count| *count == 0.0), ..first }),
+            (Function::Abs, _) => Ok(Measure { count: first.count.filter(|count| *count == (0.0, 0.0)), ..first }),
             (Function::Min | Function::Max, Some(second)) => {
                 if first.dimension != second.dimension {
                     let b = b.unwrap_or(a);
                     let (left_text, right_text) = (format!("`{}`", self.words(a)), format!("`{}`", self.words(b)));
                     let (left, right) = (first.dimension.describe(), second.dimension.describe());
-                    let finding = code::dimension_mismatch::terms(self.place(id), "comparison", (self.place(a), &left_text, &left), (self.place(b), &right_text, &right));
+                    let finding = code::dimension_mismatch::terms(
+                        self.place(id),
+                        "comparison",
+                        (self.place(a), &left_text, &left),
+                        (self.place(b), &right_text, &right),
+                    );
                     let finding = self.with_provenance(finding, &[a, b]);
                     self.report(finding);
                     return Err(());
@@ -396,7 +444,12 @@ impl Reader<'_> {
         if a.dimension != b.dimension {
             let (left_text, right_text) = (format!("`{}`", self.words(left)), format!("`{}`", self.words(right)));
             let (found, wanted) = (a.dimension.describe(), b.dimension.describe());
-            let finding = code::dimension_mismatch::terms(span, "comparison", (self.place(left), &left_text, &found), (self.place(right), &right_text, &wanted));
+            let finding = code::dimension_mismatch::terms(
+                span,
+                "comparison",
+                (self.place(left), &left_text, &found),
+                (self.place(right), &right_text, &wanted),
+            );
             let finding = self.with_provenance(finding, &[left, right]);
             self.report(finding);
             return None;

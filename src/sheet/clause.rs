@@ -41,7 +41,12 @@ impl Reader<'_> {
                     let quantity = match target {
                         Some(Target::Quantity(quantity)) => quantity,
                         Some(Target::Constant(constant)) => {
-                            self.report(code::unknown_name::not_a_quantity(item.path.span(), constant.word(), "constant", "a quantity of the sheet"));
+                            self.report(code::unknown_name::not_a_quantity(
+                                item.path.span(),
+                                constant.word(),
+                                "constant",
+                                "a quantity of the sheet",
+                            ));
                             continue;
                         }
                         None => continue,
@@ -84,7 +89,12 @@ impl Reader<'_> {
         }
     }
 
-    fn clause(&mut self, statement: &Statement, condition: Option<&syntax::Condition>, lowered: Option<Option<Condition>>) -> Option<Clause> {
+    fn clause(
+        &mut self,
+        statement: &Statement,
+        condition: Option<&syntax::Condition>,
+        lowered: Option<Option<Condition>>,
+    ) -> Option<Clause> {
         // A clause without its text is told where the line was read.
         let description = statement.description.as_ref()?;
         if matches!(lowered, Some(None)) {
@@ -121,7 +131,12 @@ impl Reader<'_> {
 
     fn correlate(&mut self, statement: &Statement, a: &syntax::Path, b: &syntax::Path, r: &syntax::Literal) {
         let mut given = |path: &syntax::Path| match self.target(path)? {
-            Target::Quantity(id) if matches!(self.sheet.quantity(id).origin, Origin::Given | Origin::SitePressure | Origin::SiteAltitude) && self.sheet.quantity(id).is_known() => Some(id),
+            Target::Quantity(id)
+                if matches!(self.sheet.quantity(id).origin, Origin::Given | Origin::SitePressure | Origin::SiteAltitude)
+                    && self.sheet.quantity(id).is_known() =>
+            {
+                Some(id)
+            }
             _ => {
                 let why = format!("`{}` is not given", path.span().of(self.text));
                 self.report(code::correlation_out_of_place::finding(path.span(), &why));
@@ -195,7 +210,8 @@ impl Reader<'_> {
             Condition::Compare { left, right, unit, .. } => {
                 let place = self.sheet.span_of(*left).unwrap_or(span).to(self.sheet.span_of(*right).unwrap_or(span));
                 let Some(dimension) = self.check_comparison(place, *left, *right) else { return false };
-                *unit = self.unit_of_side(*right).or_else(|| self.unit_of_side(*left)).unwrap_or_else(|| si_unit(dimension, Kind::Absolute));
+                *unit =
+                    self.unit_of_side(*right).or_else(|| self.unit_of_side(*left)).unwrap_or_else(|| si_unit(dimension, Kind::Absolute));
                 true
             }
         }
@@ -250,13 +266,21 @@ impl Reader<'_> {
         if shown.unit.dimension != quantity.dimension {
             let (name, found, wanted) = (quantity.name.clone(), quantity.dimension.describe(), shown.unit.dimension.describe());
             let declared = quantity.span;
-            let finding = code::dimension_mismatch::expected(*span, &format!("`{name}`"), &found, &format!("the unit `{}`", shown.unit.name), &wanted, *span)
-                .related(declared, format!("`{name}` is a {found}"));
+            let finding = code::dimension_mismatch::expected(
+                *span,
+                &format!("`{name}`"),
+                &found,
+                &format!("the unit `{}`", shown.unit.name),
+                &wanted,
+                *span,
+            )
+            .related(declared, format!("`{name}` is {}", code::a(&found)));
             self.report(finding);
             return None;
         }
         let asked = kind_of(&shown.unit, shown.basis);
-        let says = |kind: Kind, word: &str| if kind == Kind::Absolute { format!("an absolute {word}") } else { format!("a {word} difference") };
+        let says =
+            |kind: Kind, word: &str| if kind == Kind::Absolute { format!("an absolute {word}") } else { format!("a {word} difference") };
         let (kind, word) = (quantity.kind, if quantity.dimension == Dimension::PRESSURE { "pressure" } else { "temperature" });
         if matches!((kind, asked), (Kind::Absolute, Kind::Difference) | (Kind::Difference, Kind::Absolute)) {
             let finding = code::kind_mismatch::shown(pending.span, &says(kind, word), &says(asked, word), *span);

@@ -59,8 +59,18 @@ impl Reader<'_> {
                 for argument in arguments {
                     self.lower(*argument);
                 }
+                if path.field.is_none() {
+                    let word = tree.names.text(path.base.name);
+                    let near = nearest(word, Function::ALL.iter().map(|function| function.word()));
+                    self.report(code::unknown_name::function(path.base.span, word, &near));
+                    return None;
+                }
                 let what = format!("the function `{}`", path.span().of(self.text));
-                self.report(code::not_offered::finding(path.span(), &what, "saturation needs the reference equation of the gas; give the pressure or temperature as an input"));
+                self.report(code::not_offered::finding(
+                    path.span(),
+                    &what,
+                    "saturation needs the reference equation of the gas; give the pressure or temperature as an input",
+                ));
                 None
             }
         }
@@ -110,7 +120,9 @@ impl Reader<'_> {
     fn literal(&mut self, literal: &Literal) -> Option<ExprId> {
         let value = self.value(literal, "")?;
         let number = Span { start: literal.span.start, end: literal.digits.end }.of(self.text);
-        self.sheet.literals.push(ShownLiteral { number: folded(number).replace(['−', ' '], "-").replace("--", "-"), unit: value.shown.text() });
+        self.sheet
+            .literals
+            .push(ShownLiteral { number: folded(number).replace(['−', ' '], "-").replace("--", "-"), unit: value.shown.text() });
         self.literals.push(LiteralInfo { dimension: value.shown.unit.dimension, kind: value.kind, gauge: value.gauge });
         let at = self.sheet.literals.len() as u32 - 1;
         let number = self.expr(Expr::Number(value.si, at), literal.span);
@@ -140,6 +152,8 @@ impl Reader<'_> {
                 let near = self.near_names(base);
                 let near: Vec<&str> = near.iter().map(String::as_str).collect();
                 self.report(code::unknown_name::finding(path.base.span, base, &near));
+                // A declaration that is missing is one mistake, however often its name stands.
+                self.names.insert(path.base.name, (Meaning::Poisoned, path.base.span));
                 None
             }
             (Some(Meaning::Poisoned), _) => None,
@@ -153,10 +167,17 @@ impl Reader<'_> {
                 None
             }
             (Some(Meaning::State(_)), None) => {
-                self.report(code::unknown_name::not_a_quantity(path.base.span, base, "state", &format!("`{base}.p`, `{base}.T`, `{base}.rho`")));
+                self.report(code::unknown_name::not_a_quantity(
+                    path.base.span,
+                    base,
+                    "state",
+                    &format!("`{base}.p`, `{base}.T`, `{base}.rho`"),
+                ));
                 None
             }
-            (Some(Meaning::Gas(gas)), Some(field)) => self.gas_field(gas, base, tree.names.text(field.name), field.span).map(Target::Quantity),
+            (Some(Meaning::Gas(gas)), Some(field)) => {
+                self.gas_field(gas, base, tree.names.text(field.name), field.span).map(Target::Quantity)
+            }
             (Some(Meaning::State(state)), Some(field)) => {
                 if self.poisoned_states[state.0 as usize] {
                     return None;
@@ -211,7 +232,9 @@ impl Reader<'_> {
         let entry = self.sheet.gas(gas);
         let (value, si, shown, word) = match field {
             "M" => (Some(entry.gas.molar_mass().value), crate::units::Dimension::MOLAR_MASS, "g/mol", "Molar mass"),
-            "R" => (Some(entry.gas.specific_gas_constant().value), crate::units::Dimension::SPECIFIC_HEAT_CAPACITY, "J/(kg.K)", "Gas constant"),
+            "R" => {
+                (Some(entry.gas.specific_gas_constant().value), crate::units::Dimension::SPECIFIC_HEAT_CAPACITY, "J/(kg.K)", "Gas constant")
+            }
             "T_c" => (entry.gas.critical_temperature().map(|t| t.value), crate::units::Dimension::TEMPERATURE, "K", "Critical temperature"),
             _ => (entry.gas.critical_pressure().map(|p| p.value), crate::units::Dimension::PRESSURE, "Pa", "Critical pressure"),
         };
@@ -287,7 +310,10 @@ impl Reader<'_> {
                 return None;
             };
             let mut unknown = None;
-            reader.sheet.exprs.quantities(lowered, &mut |below| unknown = unknown.or((!reader.sheet.quantity(below).is_known()).then_some(below)));
+            reader
+                .sheet
+                .exprs
+                .quantities(lowered, &mut |below| unknown = unknown.or((!reader.sheet.quantity(below).is_known()).then_some(below)));
             if let Some(unknown) = unknown.filter(|unknown| Some(*unknown) != reader.sheet.site_pressure) {
                 let (name, other) = (reader.sheet.quantity(id).name.clone(), reader.sheet.quantity(unknown).name.clone());
                 reader.report(code::bounds_out_of_place::finding(span, &name, &format!("`{other}` is not given")));

@@ -167,7 +167,8 @@ impl Reader<'_> {
             self.undetermined[at] = false;
             let quantity = &mut self.sheet.quantities[at];
             quantity.dimension = dimension;
-            quantity.kind = if dimension == Dimension::PRESSURE || dimension == Dimension::TEMPERATURE { Kind::Either } else { Kind::Plain };
+            quantity.kind =
+                if dimension == Dimension::PRESSURE || dimension == Dimension::TEMPERATURE { Kind::Either } else { Kind::Plain };
         }
     }
 }

@@ -22,7 +22,8 @@ mod write;
 pub use expr::{Constant, Expr, ExprId, Exprs, GasFunction};
 pub use model::{
     Answer, Clause, Condition, Correlation, GasId, Kind, LiveValue, Origin, Property, PropertyRow, Quantity, QuantityId, Reading,
-    ReferenceConditions, Relation, RelationOrigin, Sheet, SheetGas, ShownLiteral, ShownUnit, State, StateId, StatedUncertainty, TypedNumber,
+    ReferenceConditions, Relation, RelationOrigin, Sheet, SheetGas, ShownLiteral, ShownUnit, State, StateId, StatedUncertainty,
+    TypedNumber,
 };
 pub use reader::read;
 pub use write::write_expr;

@@ -4,7 +4,7 @@ use std::sync::Arc;
 
 use crate::diagnostic::Span;
 use crate::gas::Gas;
-use crate::syntax::{BinaryOp, Basis, Comparison, Function, Head, Model, Shape};
+use crate::syntax::{Basis, BinaryOp, Comparison, Function, Head, Model, Shape};
 use crate::units::{Dimension, Rational, Unit};
 
 use super::{Expr, ExprId, Exprs, GasFunction};

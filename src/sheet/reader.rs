@@ -229,7 +229,13 @@ impl<'a> Reader<'a> {
     }
 
     /// An `unknown` or `let` with its unit.
-    fn declared(&mut self, statement: &Statement, name: crate::syntax::Named, unit: Option<crate::syntax::UnitText>, origin: Origin) -> QuantityId {
+    fn declared(
+        &mut self,
+        statement: &Statement,
+        name: crate::syntax::Named,
+        unit: Option<crate::syntax::UnitText>,
+        origin: Origin,
+    ) -> QuantityId {
         let shown = unit.map(|unit| self.shown_unit(unit));
         let poisoned = matches!(shown, Some(None));
         let shown = shown.flatten();

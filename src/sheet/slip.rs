@@ -66,7 +66,10 @@ impl Reader<'_> {
         for at in 0..self.sheet.quantities.len() {
             let quantity = &self.sheet.quantities[at];
             let Some(reading) = &quantity.reading else { continue };
-            if quantity.origin != Origin::Given || reading.si == 0.0 || quantity.kind == Kind::Difference && quantity.dimension == Dimension::TEMPERATURE {
+            if quantity.origin != Origin::Given
+                || reading.si == 0.0
+                || quantity.kind == Kind::Difference && quantity.dimension == Dimension::TEMPERATURE
+            {
                 continue;
             }
             let usual = if quantity.dimension == Dimension::PRESSURE {
@@ -95,6 +98,10 @@ impl Reader<'_> {
         let mut count = |exprs: &super::Exprs, expr: ExprId| exprs.quantities(expr, &mut |id| uses[id.0 as usize] += 1);
         for relation in &self.sheet.relations {
             count(&self.sheet.exprs, relation.right);
+            if matches!(relation.origin, RelationOrigin::At(..)) {
+                // What fixes a state is used by it, whichever of the two finds the other.
+                count(&self.sheet.exprs, relation.right);
+            }
             if relation.origin != RelationOrigin::Let {
                 count(&self.sheet.exprs, relation.left);
             }
@@ -121,12 +128,14 @@ impl Reader<'_> {
         }
         for (at, n_uses) in uses.iter().enumerate() {
             let quantity = &self.sheet.quantities[at];
-            if *n_uses > 0 || self.poisoned[at] {
+            // An unknown stands in the relation that finds it.
+            let asked = *n_uses > u32::from(quantity.origin == Origin::Unknown);
+            if asked || self.poisoned[at] {
                 continue;
             }
             match quantity.origin {
                 Origin::Given => self.findings.push(code::unused_input::finding(quantity.span, &quantity.name)),
-                Origin::Let => self.findings.push(code::unused_input::result(quantity.span, &quantity.name)),
+                Origin::Let | Origin::Unknown => self.findings.push(code::unused_input::result(quantity.span, &quantity.name)),
                 _ => {}
             }
         }
@@ -170,7 +179,9 @@ impl Reader<'_> {
             let nearest = known.iter().min_by(|a, b| off(a.1).total_cmp(&off(b.1)));
             let Some((owner, value)) = nearest else { continue };
             // Among heat capacities only one close to the gas constant is meant for it: cp and cv are larger.
-            if off(*value) > SAME_CONSTANT && off(*value) < if quantity.dimension == Dimension::MOLAR_MASS { MEANT_FOR_IT } else { MEANT_FOR_IT / 3.0 } {
+            if off(*value) > SAME_CONSTANT
+                && off(*value) < if quantity.dimension == Dimension::MOLAR_MASS { MEANT_FOR_IT } else { MEANT_FOR_IT / 3.0 }
+            {
                 let shown = format!("{} {}", units::write_figures(quantity.shown.unit.from_si(*value), 5), quantity.shown.unit.name);
                 let percent = units::write_figures(100.0 * off(*value), 2);
                 findings.push(code::constant_by_hand::finding(quantity.span, &quantity.name, &reading.text, owner, &shown, &percent));
@@ -196,7 +207,8 @@ impl Reader<'_> {
         for (span, kelvin) in found {
             let text = folded(span.of(self.text));
             let number = text.split(' ').next().unwrap_or("").to_owned();
-            let finding = code::absolute_in_product::finding(span, &text, &format!("{} K", units::write_figures(kelvin, 5)), &format!("{number} K"));
+            let finding =
+                code::absolute_in_product::finding(span, &text, &format!("{} K", units::write_figures(kelvin, 5)), &format!("{number} K"));
             self.report(finding);
         }
     }
@@ -204,7 +216,10 @@ impl Reader<'_> {
     fn factors(&self, expr: ExprId, in_product: bool, constant: bool, found: &mut Vec<(Span, f64)>) {
         match self.sheet.exprs.get(expr) {
             Expr::Number(si, literal) if in_product && !constant => {
-                if self.literals.get(literal as usize).is_some_and(|info| info.dimension == Dimension::TEMPERATURE && info.kind == Kind::Absolute)
+                if self
+                    .literals
+                    .get(literal as usize)
+                    .is_some_and(|info| info.dimension == Dimension::TEMPERATURE && info.kind == Kind::Absolute)
                     && let Some(span) = self.sheet.span_of(expr)
                 {
                     found.push((span, si));

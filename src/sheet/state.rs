@@ -22,7 +22,11 @@ impl Reader<'_> {
     ) -> Option<GasId> {
         let mut sound = true;
         if let Some((Model::Real, span)) = model {
-            self.report(code::not_offered::finding(span, "`, real`, the reference equation of a gas,", "leave it out: the gas is then calculated as an ideal gas, and judged"));
+            self.report(code::not_offered::finding(
+                span,
+                "`, real`, the reference equation of a gas,",
+                "leave it out: the gas is then calculated as an ideal gas, and judged",
+            ));
             sound = false;
         }
         let mut species: Vec<(NamedGas, f64)> = Vec::new();
@@ -37,7 +41,11 @@ impl Reader<'_> {
                 Err(unknown) => {
                     sound = false;
                     let finding = if part.species.text.eq_ignore_ascii_case("humid air") {
-                        code::not_offered::finding(part.species.span, "`humid air`", "take `dry air`, and account for the water by its partial pressure")
+                        code::not_offered::finding(
+                            part.species.span,
+                            "`humid air`",
+                            "take `dry air`, and account for the water by its partial pressure",
+                        )
                     } else if unknown.ambiguous {
                         code::unknown_gas::ambiguous(part.species.span, &part.species.text, &unknown.near.join(", "))
                     } else {
@@ -50,7 +58,10 @@ impl Reader<'_> {
         }
         let mixed = parts.len() > 1 || parts.iter().any(|part| part.share.is_some());
         if mixed && by.is_none() {
-            let span = parts.first().map_or(statement.span, |part| part.species.span).to(parts.last().map_or(statement.span, |part| part.species.span));
+            let span = parts
+                .first()
+                .map_or(statement.span, |part| part.species.span)
+                .to(parts.last().map_or(statement.span, |part| part.species.span));
             self.report(code::mixture_shares::basis(span));
             sound = false;
         }
@@ -71,7 +82,8 @@ impl Reader<'_> {
                     let span = span.to(parts.last().map_or(span, |part| part.species.span));
                     let finding = match &error {
                         MixtureError::Sum { sum } => {
-                            let rounded = |value: f64| crate::units::write_to_place(value, -6).trim_end_matches('0').trim_end_matches('.').to_owned();
+                            let rounded =
+                                |value: f64| crate::units::write_to_place(value, -6).trim_end_matches('0').trim_end_matches('.').to_owned();
                             code::mixture_shares::sum(span, &rounded(*sum), &rounded(*sum * 100.0))
                         }
                         other => code::mixture_shares::share(span, &other.to_string()),
@@ -96,7 +108,7 @@ impl Reader<'_> {
         let value = self.value(literal, "")?;
         if !value.shown.unit.dimension.is_none() {
             let dimension = value.shown.unit.dimension.describe();
-            self.report(code::mixture_shares::share(literal.span, &format!("a share is a pure number, this is a {dimension}")));
+            self.report(code::mixture_shares::share(literal.span, &format!("a share is a pure number, this is {}", code::a(&dimension))));
             return None;
         }
         Some(value.si)
@@ -171,7 +183,10 @@ impl Reader<'_> {
         if let Some((pair, why)) = dependent(&fixed.iter().map(|(property, ..)| *property).collect::<Vec<_>>())
             && !self.poisoned_states[index]
         {
-            let place = fixed.first().map_or(name.span, |(_, span, _)| *span).to(fixed.last().map_or(name.span, |(_, _, value)| self.sheet.span_of(*value).unwrap_or(name.span)));
+            let place = fixed
+                .first()
+                .map_or(name.span, |(_, span, _)| *span)
+                .to(fixed.last().map_or(name.span, |(_, _, value)| self.sheet.span_of(*value).unwrap_or(name.span)));
             self.report(code::dependent_properties::finding(place, &owner, &pair, why));
             self.poisoned_states[index] = true;
         }
@@ -199,6 +214,8 @@ impl Reader<'_> {
     pub(super) fn laws(&mut self) {
         for index in 0..self.sheet.states.len() {
             let state = StateId(index as u32);
+            // A state whose own line was passed over, because its name means something else, has no gas.
+            self.poisoned_states[index] |= self.sheet.states[index].gas.0 as usize >= self.sheet.gases.len();
             if self.poisoned_states[index] {
                 // Properties named before the state's own line was found to be in error.
                 for (key, id) in &self.properties {
@@ -212,7 +229,11 @@ impl Reader<'_> {
             // Pressure and temperature are part of every state: the verdict on its model needs them.
             self.property(state, Property::P);
             self.property(state, Property::T);
-            let used: Vec<Property> = Property::ROWS.iter().map(|row| row.property).filter(|property| self.properties.contains_key(&(state, *property))).collect();
+            let used: Vec<Property> = Property::ROWS
+                .iter()
+                .map(|row| row.property)
+                .filter(|property| self.properties.contains_key(&(state, *property)))
+                .collect();
             let gas = self.sheet.states[index].gas;
             if let Err(species) = self.sheet.gas(gas).gas.has_caloric()
                 && used.iter().any(|property| property.is_caloric())
@@ -332,9 +353,8 @@ impl Reader<'_> {
 /// Enthalpy, internal energy and the heat capacities of an ideal gas are functions of temperature alone, density is one
 /// over specific volume, and the compressibility factor is 1 everywhere.
 fn dependent(at: &[Property]) -> Option<(String, &'static str)> {
-    let of_temperature = |property: &Property| {
-        matches!(property, Property::T | Property::H | Property::U | Property::Cp | Property::Cv | Property::K)
-    };
+    let of_temperature =
+        |property: &Property| matches!(property, Property::T | Property::H | Property::U | Property::Cp | Property::Cv | Property::K);
     let of_density = |property: &Property| matches!(property, Property::V | Property::Rho);
     if at.len() < 2 {
         return None;

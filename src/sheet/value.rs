@@ -34,7 +34,8 @@ impl Reader<'_> {
                 let place = Span::new(offset, offset + error.len);
                 let finding = match &error.kind {
                     UnitErrorKind::Unknown { word, near, help } => {
-                        let names_a_quantity = self.tree.names.find(text).is_some_and(|name| self.names.contains_key(&name) || self.is_declared(name));
+                        let names_a_quantity =
+                            self.tree.names.find(text).is_some_and(|name| self.names.contains_key(&name) || self.is_declared(name));
                         if names_a_quantity {
                             code::unknown_unit::missing_multiplication(token, text, self.number_before(token))
                         } else {
@@ -84,9 +85,9 @@ impl Reader<'_> {
 
     fn is_declared(&self, name: crate::syntax::Name) -> bool {
         self.tree.statements.iter().any(|statement| match &statement.kind {
-            StatementKind::Given { name: declared, .. } | StatementKind::Unknown { name: declared, .. } | StatementKind::Let { name: declared, .. } => {
-                declared.name == name
-            }
+            StatementKind::Given { name: declared, .. }
+            | StatementKind::Unknown { name: declared, .. }
+            | StatementKind::Let { name: declared, .. } => declared.name == name,
             _ => false,
         })
     }
@@ -152,7 +153,12 @@ impl Reader<'_> {
             return None;
         }
         let Some(text) = literal.unit else {
-            return Some(Value { si: literal.value, gauge: false, kind: Kind::Plain, shown: ShownUnit { unit: Unit::pure(), basis: None } });
+            return Some(Value {
+                si: literal.value,
+                gauge: false,
+                kind: Kind::Plain,
+                shown: ShownUnit { unit: Unit::pure(), basis: None },
+            });
         };
         let unit = self.unit(text.span)?;
         if unit.needs_basis() && text.basis.is_none() {
@@ -250,7 +256,12 @@ impl Reader<'_> {
         {
             return refuse(self, span, "degrees of freedom are above zero", "write `dof=9`, or leave it out where they are many");
         }
-        Some(StatedUncertainty { width_si, shape: if stated.k.is_some() { Shape::Normal } else { stated.shape }, k, dof: stated.dof.map(|(dof, _)| dof) })
+        Some(StatedUncertainty {
+            width_si,
+            shape: if stated.k.is_some() { Shape::Normal } else { stated.shape },
+            k,
+            dof: stated.dof.map(|(dof, _)| dof),
+        })
     }
 
     /// A width behind `±`: an interval, for which a pressure needs no basis.
@@ -323,10 +334,13 @@ impl Reader<'_> {
             self.references_missing[2] |= at == 1;
             return;
         };
-        for (value, literal, dimension, word) in [(&t, temperature, Dimension::TEMPERATURE, "a temperature"), (&p, pressure, Dimension::PRESSURE, "a pressure")] {
+        for (value, literal, dimension, word) in
+            [(&t, temperature, Dimension::TEMPERATURE, "a temperature"), (&p, pressure, Dimension::PRESSURE, "a pressure")]
+        {
             let found = value.shown.unit.dimension;
             if found != dimension || value.kind == Kind::Difference || value.gauge || value.si <= 0.0 {
-                let wanted = if dimension == Dimension::PRESSURE { "absolute pressure above zero" } else { "temperature above absolute zero" };
+                let wanted =
+                    if dimension == Dimension::PRESSURE { "absolute pressure above zero" } else { "temperature above absolute zero" };
                 self.report(code::dimension_mismatch::expected(
                     literal.span,
                     "this part of the reference conditions",
@@ -357,7 +371,14 @@ impl Reader<'_> {
                     }
                     if literal.unit.is_some_and(|unit| matches!(unit.basis, Some((Basis::Gauge | Basis::Difference, _)))) {
                         let span = literal.span;
-                        self.report(code::dimension_mismatch::expected(span, "this", "reading against the atmosphere", "the pressure of a site", "absolute pressure", span));
+                        self.report(code::dimension_mismatch::expected(
+                            span,
+                            "this",
+                            "reading against the atmosphere",
+                            "the pressure of a site",
+                            "absolute pressure",
+                            span,
+                        ));
                         continue;
                     }
                     let Some(value) = self.site_value(literal, Dimension::PRESSURE, "the pressure of a site", statement) else { continue };
@@ -394,7 +415,9 @@ impl Reader<'_> {
                 self.report(code::site_pressure_and_altitude::finding(span, &kpa(p_pa), &kpa(standard), altitude));
             }
             (None, Some((p_pa, span))) => {
-                let Some(altitude) = self.sheet.quantities.iter().position(|quantity| quantity.origin == Origin::SiteAltitude) else { return };
+                let Some(altitude) = self.sheet.quantities.iter().position(|quantity| quantity.origin == Origin::SiteAltitude) else {
+                    return;
+                };
                 let at = self.sheet.quantities[altitude].statement;
                 self.statement = at;
                 let statement = &self.tree.statements[at];
@@ -419,7 +442,14 @@ impl Reader<'_> {
         let value = self.value(literal, "")?;
         let found = value.shown.unit.dimension;
         if found != dimension {
-            self.report(code::dimension_mismatch::expected(literal.span, "this", &found.describe(), what, &dimension.describe(), literal.span));
+            self.report(code::dimension_mismatch::expected(
+                literal.span,
+                "this",
+                &found.describe(),
+                what,
+                &dimension.describe(),
+                literal.span,
+            ));
             return None;
         }
         if statement.description.is_none() && statement.source.is_none() {

@@ -24,13 +24,21 @@ pub fn write_expr(sheet: &Sheet, expr: ExprId) -> String {
 
 fn tightness(sheet: &Sheet, expr: ExprId) -> Tightness {
     match sheet.exprs.get(expr) {
+        Expr::Binary(BinaryOp::Add, a, _) if is_gauge_reading(sheet, a) => Tightness::Power,
         Expr::Binary(BinaryOp::Add | BinaryOp::Subtract, ..) => Tightness::Sum,
         Expr::Binary(BinaryOp::Multiply | BinaryOp::Divide, ..) => Tightness::Product,
         Expr::Binary(BinaryOp::Power, ..) => Tightness::Power,
         Expr::Negate(_) => Tightness::Sign,
+        Expr::Number(_, literal) if sheet.literals.get(literal as usize).is_some_and(|literal| !literal.unit.is_empty()) => {
+            Tightness::Power
+        }
         Expr::Number(value, literal) if value < 0.0 && sheet.literals.get(literal as usize).is_none() => Tightness::Sign,
         _ => Tightness::Atom,
     }
+}
+
+fn is_gauge_reading(sheet: &Sheet, expr: ExprId) -> bool {
+    matches!(sheet.exprs.get(expr), Expr::Number(_, literal) if sheet.literals.get(literal as usize).is_some_and(|literal| literal.unit.ends_with(" gauge")))
 }
 
 fn bracketed(sheet: &Sheet, expr: ExprId, least: Tightness, text: &mut String) {
@@ -61,6 +69,8 @@ fn write(sheet: &Sheet, expr: ExprId, text: &mut String) {
             text.push('-');
             bracketed(sheet, inner, Tightness::Power, text);
         }
+        // A gauge reading stands for itself and the pressure of the site.
+        Expr::Binary(BinaryOp::Add, a, _) if is_gauge_reading(sheet, a) => write(sheet, a, text),
         Expr::Binary(op, a, b) => {
             let (sign, left, right) = match op {
                 BinaryOp::Add => (" + ", Tightness::Sum, Tightness::Sum),

@@ -93,12 +93,24 @@ pub(super) fn missing(sheet: &Sheet, part: &Part, quantities: &[QuantityId], rel
 
 /// A relation that was not needed and does not agree. `touched` are inputs that its sides depend on, `part` the relations
 /// that are one too many together.
-pub(super) fn conflict(sheet: &Sheet, relation: usize, difference: f64, allowed: f64, touched: &[QuantityId], part: &[usize]) -> Diagnostic {
+pub(super) fn conflict(
+    sheet: &Sheet,
+    relation: usize,
+    difference: f64,
+    allowed: f64,
+    touched: &[QuantityId],
+    part: &[usize],
+) -> Diagnostic {
     let entry = &sheet.relations[relation];
     let (difference, allowed) = (in_unit(sheet, entry.left, difference), in_unit(sheet, entry.left, allowed));
     let what = what_of(sheet, relation);
     let mut places: Vec<(Span, String)> = Vec::new();
-    for other in part.iter().filter(|other| **other != relation) {
+    let state = match entry.origin {
+        RelationOrigin::At(state, _) | RelationOrigin::Law(state, _) => Some(state),
+        _ => None,
+    };
+    // The laws of a state stand on no line of their own.
+    for other in part.iter().filter(|other| **other != relation && !matches!(sheet.relations[**other].origin, RelationOrigin::Law(..))) {
         let span = sheet.relations[*other].span;
         places.push((span, "takes part in the conflict".to_owned()));
     }
@@ -114,13 +126,26 @@ pub(super) fn conflict(sheet: &Sheet, relation: usize, difference: f64, allowed:
     for (span, text) in places {
         finding = finding.related(span, text);
     }
+    if let Some(state) = state.map(|state| sheet.state(state)).filter(|state| state.at.len() > 2) {
+        let fields: Vec<String> = state.at.iter().map(|(property, _)| format!("`{}`", property.row().field)).collect();
+        finding = finding.fact(format!(
+            "a state has two degrees of freedom: two of {} fix `{}`, and the others follow",
+            fields.join(", "),
+            state.name
+        ));
+    }
     finding
 }
 
 /// A relation that was not needed and agrees.
 pub(super) fn agrees(sheet: &Sheet, relation: usize, difference: f64, allowed: f64) -> Diagnostic {
     let entry = &sheet.relations[relation];
-    code::surplus_agrees::finding(entry.span, &what_of(sheet, relation), &in_unit(sheet, entry.left, difference), &in_unit(sheet, entry.left, allowed))
+    code::surplus_agrees::finding(
+        entry.span,
+        &what_of(sheet, relation),
+        &in_unit(sheet, entry.left, difference),
+        &in_unit(sheet, entry.left, allowed),
+    )
 }
 
 fn what_of(sheet: &Sheet, relation: usize) -> String {
@@ -129,8 +154,14 @@ fn what_of(sheet: &Sheet, relation: usize) -> String {
         RelationOrigin::At(state, property) | RelationOrigin::Law(state, property) => {
             format!("`{}` of the state `{}`", property.row().field, sheet.state(state).name)
         }
-        _ => format!("`{} = {}`", write_expr(sheet, entry.left), write_expr(sheet, entry.right)),
+        _ => format!("`{}`", cut(&format!("{} = {}", write_expr(sheet, entry.left), write_expr(sheet, entry.right)))),
     }
+}
+
+/// Text cut to what a message can hold.
+fn cut(text: &str) -> String {
+    const LONGEST: usize = 80;
+    if text.chars().count() <= LONGEST { text.to_owned() } else { text.chars().take(LONGEST).chain(['…']).collect() }
 }
 
 /// An SI difference with the unit of what stands on a side.
@@ -170,11 +201,19 @@ pub(super) fn fault(sheet: &Sheet, fault: &Fault, relations: &[usize], quantitie
         Fault::Outside { quantity, value, low, high } => {
             let end = |bound: f64| if bound.is_finite() { shown(sheet, *quantity, bound, site_pa) } else { String::new() };
             let bounds = format!("{} .. {}", end(*low), end(*high)).trim().to_owned();
-            if !value.is_finite() {
+            let stated = sheet.quantity(*quantity).low.is_some() || sheet.quantity(*quantity).high.is_some();
+            if let Some(finding) = impossible(sheet, *quantity, *value, site_pa).filter(|_| !stated) {
+                finding
+            } else if !value.is_finite() {
                 let name = format!("`{}`", sheet.quantity(*quantity).name);
                 code::no_solution::finding(first, &name, &format!("within {bounds}"))
             } else {
-                code::no_solution::outside_bounds(place(*quantity), &sheet.quantity(*quantity).name, &shown(sheet, *quantity, *value, site_pa), &bounds)
+                code::no_solution::outside_bounds(
+                    place(*quantity),
+                    &sheet.quantity(*quantity).name,
+                    &shown(sheet, *quantity, *value, site_pa),
+                    &bounds,
+                )
             }
         }
         Fault::NoRoot { quantity, low, high } => {
@@ -192,7 +231,12 @@ pub(super) fn fault(sheet: &Sheet, fault: &Fault, relations: &[usize], quantitie
             let tried = format!("Newton's method was tried from {starts} starts");
             let largest = if residual.is_finite() { units::write_figures(*residual, 2) } else { "not a number".to_owned() };
             let line = relations.get(*worst).map_or(String::new(), |relation| what_of(sheet, *relation));
-            let mut finding = code::not_converged::finding(first, &list(&names), &tried, &format!("the largest scaled residual left is {largest}, in {line}"));
+            let mut finding = code::not_converged::finding(
+                first,
+                &list(&names),
+                &tried,
+                &format!("the largest scaled residual left is {largest}, in {line}"),
+            );
             if !at_bound.is_empty() {
                 let names: Vec<String> = at_bound.iter().map(|id| sheet.quantity(*id).name.clone()).collect();
                 finding = finding.fact(format!("the search ran into the bounds of {}", list(&names)));
@@ -235,17 +279,23 @@ pub(super) fn undefined(sheet: &Sheet, values: &[f64], expr: ExprId, fallback: S
             ids.push(id);
         }
     });
-    let list: Vec<String> =
-        ids.iter().take(MOST_NAMES).map(|id| format!("{} = {}", sheet.quantity(*id).name, shown(sheet, *id, values[id.0 as usize], site_pa))).collect();
+    let list: Vec<String> = ids
+        .iter()
+        .take(MOST_NAMES)
+        .map(|id| format!("{} = {}", sheet.quantity(*id).name, shown(sheet, *id, values[id.0 as usize], site_pa)))
+        .collect();
     let list = if list.is_empty() { "there is no quantity in it".to_owned() } else { format!("with {}", list.join(", ")) };
-    let place = |part: ExprId| sheet.span_of(part).filter(|span| fallback.start <= span.start && span.end <= fallback.end).unwrap_or(fallback);
-    let text = write_expr(sheet, expr);
+    let place =
+        |part: ExprId| sheet.span_of(part).filter(|span| fallback.start <= span.start && span.end <= fallback.end).unwrap_or(fallback);
+    let text = cut(&write_expr(sheet, expr));
     let value = |part: ExprId| recheck::walk(sheet, values, part).value;
     let beyond = |why: &str| Some(code::undefined_value::finding(place(expr), &text, why, &list));
     match sheet.exprs.get(expr) {
-        Expr::Binary(BinaryOp::Divide, _, b) if value(b) == 0.0 => Some(code::division_by_zero::finding(place(b), &write_expr(sheet, b), &list)),
+        Expr::Binary(BinaryOp::Divide, _, b) if value(b) == 0.0 => {
+            Some(code::division_by_zero::finding(place(b), &cut(&write_expr(sheet, b)), &list))
+        }
         Expr::Binary(BinaryOp::Power, a, b) if value(a) == 0.0 && value(b) < 0.0 => {
-            Some(code::division_by_zero::finding(place(a), &write_expr(sheet, a), &list))
+            Some(code::division_by_zero::finding(place(a), &cut(&write_expr(sheet, a)), &list))
         }
         Expr::Binary(BinaryOp::Power, a, _) if value(a) < 0.0 => beyond("a negative number has no power with a fraction"),
         Expr::Call(Function::Ln | Function::Log10, a, _) if value(a) <= 0.0 => beyond("the logarithm of zero or less"),
@@ -253,8 +303,12 @@ pub(super) fn undefined(sheet: &Sheet, values: &[f64], expr: ExprId, fallback: S
         Expr::Call(Function::Asin | Function::Acos, ..) => beyond("its argument lies outside -1 to 1"),
         Expr::Gas(function, gas, a) => {
             let range = sheet.gas(gas).gas.caloric_range();
-            let limit = format!("from {} K to {} K", units::write_figures(range.limit_low_k, 4), units::write_figures(range.limit_high_k, 4));
-            let inverse = matches!(function, GasFunction::TemperatureOfEnthalpy | GasFunction::TemperatureOfEntropy | GasFunction::TemperatureOfInternalEnergy);
+            let limit =
+                format!("from {} K to {} K", units::write_figures(range.limit_low_k, 4), units::write_figures(range.limit_high_k, 4));
+            let inverse = matches!(
+                function,
+                GasFunction::TemperatureOfEnthalpy | GasFunction::TemperatureOfEntropy | GasFunction::TemperatureOfInternalEnergy
+            );
             if inverse {
                 beyond(&format!("the temperature that belongs to it lies outside the range of the heat capacity, {limit}"))
             } else {

@@ -17,12 +17,24 @@ const EQUAL: f64 = 1e-12;
 
 /// Judges a clause; `None` where it has no condition. `half_widths` are those of left side less right side of each of its
 /// comparisons in order.
-pub(super) fn judge(sheet: &Sheet, values: &[f64], clause: &Clause, half_widths: &mut impl Iterator<Item = f64>, site_pa: f64) -> Option<Judged> {
+pub(super) fn judge(
+    sheet: &Sheet,
+    values: &[f64],
+    clause: &Clause,
+    half_widths: &mut impl Iterator<Item = f64>,
+    site_pa: f64,
+) -> Option<Judged> {
     let condition = clause.condition.as_ref()?;
     Some(judge_condition(sheet, values, condition, half_widths, site_pa))
 }
 
-fn judge_condition(sheet: &Sheet, values: &[f64], condition: &Condition, half_widths: &mut impl Iterator<Item = f64>, site_pa: f64) -> Judged {
+fn judge_condition(
+    sheet: &Sheet,
+    values: &[f64],
+    condition: &Condition,
+    half_widths: &mut impl Iterator<Item = f64>,
+    site_pa: f64,
+) -> Judged {
     match condition {
         Condition::And(a, b) => {
             let (a, b) = (judge_condition(sheet, values, a, half_widths, site_pa), judge_condition(sheet, values, b, half_widths, site_pa));
@@ -65,7 +77,12 @@ fn judge_condition(sheet: &Sheet, values: &[f64], condition: &Condition, half_wi
 pub(super) fn state(sheet: &Sheet, values: &[f64], id: StateId) -> StateVerdict {
     let state = sheet.state(id);
     let value = |wanted: Property| {
-        state.properties.iter().find(|(property, _)| *property == wanted).map(|(_, quantity)| values[quantity.0 as usize]).filter(|value| value.is_finite())
+        state
+            .properties
+            .iter()
+            .find(|(property, _)| *property == wanted)
+            .map(|(_, quantity)| values[quantity.0 as usize])
+            .filter(|value| value.is_finite())
     };
     let (p_pa, t_k) = (value(Property::P), value(Property::T));
     let rules = p_pa.zip(t_k).and_then(|(p_pa, t_k)| {

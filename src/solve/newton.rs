@@ -181,11 +181,7 @@ pub(super) fn start(unknowns: &[Unknown], number: u32) -> Vec<f64> {
             let wide = unknown.high - unknown.low > 1e6 * unknown.size;
             if number == 0 {
                 return unknown.near.unwrap_or_else(|| {
-                    if !wide {
-                        0.5 * (unknown.low + unknown.high)
-                    } else {
-                        unknown.size.clamp(unknown.low, unknown.high)
-                    }
+                    if !wide { 0.5 * (unknown.low + unknown.high) } else { unknown.size.clamp(unknown.low, unknown.high) }
                 });
             }
             if !wide {

@@ -20,7 +20,8 @@ pub(super) fn cannot_be_negative(quantity: &Quantity) -> bool {
     if let Origin::Property(_, property) = quantity.origin {
         return !matches!(property, Property::H | Property::U | Property::S);
     }
-    [Dimension::MASS, Dimension::VOLUME, Dimension::DENSITY, Dimension::SPECIFIC_VOLUME, Dimension::AMOUNT, Dimension::MOLAR_MASS].contains(&dimension)
+    [Dimension::MASS, Dimension::VOLUME, Dimension::DENSITY, Dimension::SPECIFIC_VOLUME, Dimension::AMOUNT, Dimension::MOLAR_MASS]
+        .contains(&dimension)
 }
 
 /// Whether the positive one of two roots is meant without a word: lengths and areas, which may be negative only as

@@ -294,7 +294,14 @@ impl Compiler<'_> {
         None
     }
 
-    fn numeric_torn(&mut self, relations: Vec<usize>, quantities: Vec<QuantityId>, tear: QuantityId, order: &[(usize, QuantityId, ExprId)], rest: &[usize]) {
+    fn numeric_torn(
+        &mut self,
+        relations: Vec<usize>,
+        quantities: Vec<QuantityId>,
+        tear: QuantityId,
+        order: &[(usize, QuantityId, ExprId)],
+        rest: &[usize],
+    ) {
         debug_assert_eq!(rest.len(), 1);
         self.numeric(relations, quantities, &[tear], order, Vec::new());
     }
@@ -329,8 +336,11 @@ impl Compiler<'_> {
         for (_, id, expression) in order {
             self.plan.slots[id.0 as usize] = self.expr(*expression);
         }
-        let mut residuals: Vec<Residual> =
-            relations.iter().filter(|relation| order.iter().all(|(used, ..)| used != *relation)).map(|relation| self.residual(*relation)).collect();
+        let mut residuals: Vec<Residual> = relations
+            .iter()
+            .filter(|relation| order.iter().all(|(used, ..)| used != *relation))
+            .map(|relation| self.residual(*relation))
+            .collect();
         let places: BTreeMap<QuantityId, u32> = unknowns.iter().enumerate().map(|(at, (id, _))| (*id, at as u32)).collect();
         for residual in &mut residuals {
             let relation = &self.sheet.relations[residual.relation];

@@ -59,8 +59,14 @@ pub(super) struct Evaluation<'a> {
 /// Evaluates a plan at the inputs of its sheet.
 pub(super) fn evaluate<'a>(sheet: &Sheet, plan: &'a Plan, inputs: &[f64]) -> Evaluation<'a> {
     let n = plan.tape.len();
-    let mut evaluation =
-        Evaluation { plan, values: vec![f64::NAN; n], outcomes: Vec::new(), tangents: vec![0.0; n], magnitudes: vec![0.0; n], adjoints: vec![0.0; n] };
+    let mut evaluation = Evaluation {
+        plan,
+        values: vec![f64::NAN; n],
+        outcomes: Vec::new(),
+        tangents: vec![0.0; n],
+        magnitudes: vec![0.0; n],
+        adjoints: vec![0.0; n],
+    };
     for segment in &plan.segments {
         match segment {
             Segment::Straight(range) => plan.tape.evaluate(range.clone(), inputs, &mut evaluation.values),
@@ -189,7 +195,8 @@ impl Evaluation<'_> {
             evaluations = residual.evaluations;
             found
         } else {
-            let mut branches: Vec<f64> = block.candidates.iter().map(|(slot, _)| self.values[*slot as usize]).filter(|value| value.is_finite()).collect();
+            let mut branches: Vec<f64> =
+                block.candidates.iter().map(|(slot, _)| self.values[*slot as usize]).filter(|value| value.is_finite()).collect();
             branches.dedup();
             branches
         };
@@ -246,7 +253,10 @@ impl Evaluation<'_> {
         let mut best = None;
         for root in roots {
             self.sample_at(block, slot, *root, size, inputs);
-            let distance: f64 = nears.iter().map(|(slot, near)| crate::units::math::powi((self.values[*slot as usize] - near) / near.abs().max(1e-12), 2)).sum();
+            let distance: f64 = nears
+                .iter()
+                .map(|(slot, near)| crate::units::math::powi((self.values[*slot as usize] - near) / near.abs().max(1e-12), 2))
+                .sum();
             if best.is_none_or(|(least, _)| distance < least) {
                 best = Some((distance, *root));
             }
@@ -271,8 +281,12 @@ impl Evaluation<'_> {
             let lowest = if bounds.low.is_some() || physics::cannot_be_negative(quantity) { range.low } else { f64::NEG_INFINITY };
             let highest = if bounds.high.is_some() { range.high } else { f64::INFINITY };
             let slack = |bound: f64| ON_THE_BOUND * bound.abs();
-            (!value.is_finite() || value < lowest - slack(lowest) || value > highest + slack(highest))
-                .then_some(Fault::Outside { quantity: bounds.quantity, value, low: lowest, high: highest })
+            (!value.is_finite() || value < lowest - slack(lowest) || value > highest + slack(highest)).then_some(Fault::Outside {
+                quantity: bounds.quantity,
+                value,
+                low: lowest,
+                high: highest,
+            })
         })
     }
 
@@ -314,7 +328,10 @@ impl Evaluation<'_> {
             }
         }
         let positive = |run: &newton::Run| {
-            run.x.iter().zip(&block.bounds).all(|(x, bounds)| *x >= 0.0 || bounds.low.is_some() || !physics::is_taken_positive(sheet.quantity(bounds.quantity)))
+            run.x
+                .iter()
+                .zip(&block.bounds)
+                .all(|(x, bounds)| *x >= 0.0 || bounds.low.is_some() || !physics::is_taken_positive(sheet.quantity(bounds.quantity)))
         };
         if solutions.iter().any(positive) {
             solutions.retain(positive);
@@ -365,8 +382,11 @@ impl Evaluation<'_> {
                         tangents[*slot as usize] = 0.0;
                     }
                     self.plan.tape.tangents(range.clone(), &self.values, tangents);
-                    let moved: Vec<f64> =
-                        block.residuals.iter().map(|residual| tangents[residual.right as usize] - tangents[residual.left as usize]).collect();
+                    let moved: Vec<f64> = block
+                        .residuals
+                        .iter()
+                        .map(|residual| tangents[residual.right as usize] - tangents[residual.left as usize])
+                        .collect();
                     let Some(Ok(Solved { factors: Some(factors), .. })) = self.outcomes.get(*at) else { continue };
                     if moved.iter().all(|moved| *moved == 0.0) {
                         continue;

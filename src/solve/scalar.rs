@@ -20,7 +20,7 @@ const MOST_STEPS: u32 = 200;
 const SAME_ROOT: f64 = 1e-7;
 
 /// How far from its place, relative, a root that is only touched may lie for the function not quite to reach zero.
-const TOUCHING: f64 = 1e-8;
+const TOUCHING: f64 = 1e-7;
 
 /// Residual over the size of its terms below which an end of a bracket is a root and not a jump or a pole.
 const ROOT_RESIDUAL: f64 = 1e-7;
@@ -208,9 +208,11 @@ fn touching(function: &mut impl Function, from: f64, to: f64, size: f64) -> Opti
         x = 0.5 * (low + high);
         here = function.sample(x);
     }
-    let curvature = (b.slope - a.slope).abs() / (to - from).abs();
+    // The curvature at the place itself: further out it may be anything.
+    let beside = 1e-5 * x.abs().max(1e-3 * size);
+    let curvature = (function.sample(x + beside).slope - function.sample(x - beside).slope).abs() / (2.0 * beside);
     let reach = TOUCHING * x.abs().max(1e-3 * size);
-    let close = here.value.abs() <= 0.5 * curvature * reach * reach || here.value.abs() <= 64.0 * f64::EPSILON * here.magnitude;
+    let close = here.value.abs() <= 0.5 * curvature * reach * reach;
     close.then_some(x)
 }
 
@@ -238,7 +240,8 @@ mod tests {
 
     #[test]
     fn all_roots_of_a_cubic_are_found_to_the_last_digits() {
-        let found = roots_of(|x| [(x - 1.0) * (x - 2.0) * (x + 3.0), 3.0 * x * x - 7.0, (x * x * x).abs() + 7.0 * x.abs() + 6.0], -10.0, 10.0);
+        let found =
+            roots_of(|x| [(x - 1.0) * (x - 2.0) * (x + 3.0), 3.0 * x * x - 7.0, (x * x * x).abs() + 7.0 * x.abs() + 6.0], -10.0, 10.0);
         assert_eq!(found.len(), 3);
         for (root, expected) in found.iter().zip([-3.0, 1.0, 2.0]) {
             assert!((root - expected).abs() < 4e-15, "{root}");

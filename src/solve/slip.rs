@@ -4,14 +4,22 @@ use crate::diagnostic::{Diagnostic, code};
 use crate::sheet::{Origin, Property, QuantityId, Sheet};
 use crate::units::{self, Dimension};
 
+use super::plan::PlannedStep;
 use super::{Judged, explain};
 
 /// A heat capacity ratio given by hand may differ from that of the gas by this much before it is told.
 const SAME_RATIO: f64 = 1e-3;
 
 /// Looks for slips at the solution.
-pub(super) fn slips(sheet: &Sheet, values: &[f64], requirements: &[Judged], site_pa: f64, findings: &mut Vec<Diagnostic>) {
-    let moved = moved_by_inputs(sheet);
+pub(super) fn slips(
+    sheet: &Sheet,
+    values: &[f64],
+    steps: &[PlannedStep],
+    requirements: &[Judged],
+    site_pa: f64,
+    findings: &mut Vec<Diagnostic>,
+) {
+    let moved = moved_by_inputs(sheet, steps);
     let mut told: Vec<QuantityId> = Vec::new();
     for answer in &sheet.answers {
         if !moved[answer.quantity.0 as usize] && !told.contains(&answer.quantity) {
@@ -33,6 +41,8 @@ pub(super) fn slips(sheet: &Sheet, values: &[f64], requirements: &[Judged], site
         }
         if let Some(sides) = &judged.sides
             && sides.margin.abs() < sides.half_width
+            // Sides that are not known at all decide nothing by their figures.
+            && sides.half_width <= sides.left.abs() + sides.right.abs()
             && result
         {
             let unit = sides.unit.split(' ').next().unwrap_or("");
@@ -51,27 +61,19 @@ pub(super) fn slips(sheet: &Sheet, values: &[f64], requirements: &[Judged], site
     }
 }
 
-/// Which quantities hang on an input, through relations.
-fn moved_by_inputs(sheet: &Sheet) -> Vec<bool> {
+/// Which quantities hang on an input, in the order in which they are found.
+fn moved_by_inputs(sheet: &Sheet, steps: &[PlannedStep]) -> Vec<bool> {
     let mut moved: Vec<bool> = sheet.quantities.iter().map(|quantity| quantity.reading.is_some()).collect();
-    let mut uses: Vec<Vec<u32>> = vec![Vec::new(); moved.len()];
-    for (at, relation) in sheet.relations.iter().enumerate() {
-        for side in [relation.left, relation.right] {
-            sheet.exprs.quantities(side, &mut |id| uses[id.0 as usize].push(at as u32));
-        }
-    }
-    let mut open: Vec<usize> = (0..moved.len()).filter(|at| moved[*at]).collect();
-    while let Some(at) = open.pop() {
-        for relation in &uses[at] {
-            let relation = &sheet.relations[*relation as usize];
+    for step in steps {
+        let mut moves = false;
+        for relation in &step.relations {
+            let relation = &sheet.relations[*relation];
             for side in [relation.left, relation.right] {
-                sheet.exprs.quantities(side, &mut |id| {
-                    let other = id.0 as usize;
-                    if !sheet.quantity(id).is_known() && !std::mem::replace(&mut moved[other], true) {
-                        open.push(other);
-                    }
-                });
+                sheet.exprs.quantities(side, &mut |id| moves |= !step.quantities.contains(&id) && moved[id.0 as usize]);
             }
+        }
+        for id in &step.quantities {
+            moved[id.0 as usize] |= moves;
         }
     }
     moved
@@ -83,7 +85,8 @@ fn ratios_by_hand(sheet: &Sheet, values: &[f64], findings: &mut Vec<Diagnostic>)
         let (Origin::Given, Some(reading)) = (quantity.origin, &quantity.reading) else { continue };
         let symbol = quantity.name.split('_').next().unwrap_or("");
         let description = quantity.description.to_lowercase();
-        let is_ratio = matches!(symbol, "k" | "kappa" | "gamma") && (description.contains("heat capacit") || description.contains("specific heat") || description.contains("isentropic"));
+        let is_ratio = matches!(symbol, "k" | "kappa" | "gamma")
+            && (description.contains("heat capacit") || description.contains("specific heat") || description.contains("isentropic"));
         if quantity.dimension != Dimension::NONE || !is_ratio || !(1.0..2.0).contains(&reading.si) {
             continue;
         }
@@ -101,7 +104,14 @@ fn ratios_by_hand(sheet: &Sheet, values: &[f64], findings: &mut Vec<Diagnostic>)
         if difference > SAME_RATIO {
             let owner = format!("{}.k", state.name);
             let percent = units::write_figures(100.0 * difference, 2);
-            findings.push(code::constant_by_hand::ratio(quantity.span, &quantity.name, &reading.text, &owner, &units::write_figures(k, 4), &percent));
+            findings.push(code::constant_by_hand::ratio(
+                quantity.span,
+                &quantity.name,
+                &reading.text,
+                &owner,
+                &units::write_figures(k, 4),
+                &percent,
+            ));
         }
     }
 }

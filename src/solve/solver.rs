@@ -3,7 +3,7 @@
 use std::collections::BTreeSet;
 
 use crate::diagnostic::{Diagnostic, code};
-use crate::sheet::{Origin, QuantityId, RelationOrigin, Sheet, StateId};
+use crate::sheet::{Expr, ExprId, GasFunction, Origin, QuantityId, RelationOrigin, Sheet, StateId};
 use crate::units::{self, Dimension};
 
 use super::plan::{self, How, NO_SLOT, Plan};
@@ -57,7 +57,8 @@ fn analyse(sheet: &Sheet) -> Analysed {
         RelationOrigin::At(..) => 2,
         RelationOrigin::Line | RelationOrigin::Atmosphere => 3,
     };
-    let mut relations: Vec<usize> = (0..sheet.relations.len()).filter(|at| sheet.relations[*at].origin != RelationOrigin::Atmosphere).collect();
+    let mut relations: Vec<usize> =
+        (0..sheet.relations.len()).filter(|at| sheet.relations[*at].origin != RelationOrigin::Atmosphere).collect();
     relations.sort_by_key(|at| (rank(sheet.relations[*at].origin), *at));
     let mut pattern = Pattern::new(quantities.len());
     let mut row = Vec::new();
@@ -167,9 +168,14 @@ fn faults(sheet: &Sheet, plan: &Plan, evaluation: &Evaluation, values: &[f64], s
                 How::ClosedForm(expression) => {
                     let id = step.quantities[0];
                     let span = sheet.relations[step.relations[0]].span;
-                    if let Some(finding) = out_of_model(sheet, id, values).or_else(|| explain::undefined(sheet, values, *expression, span, site_pa)) {
+                    if let Some(finding) = out_of_model(sheet, id, values)
+                        .or_else(|| temperature_out_of_model(sheet, id, *expression, values))
+                        .or_else(|| explain::undefined(sheet, values, *expression, span, site_pa))
+                    {
                         findings.push(finding);
-                    } else if let Some(finding) = explain::impossible(sheet, id, values[id.0 as usize], site_pa).or_else(|| outside(sheet, plan, evaluation, id, values, site_pa)) {
+                    } else if let Some(finding) = explain::impossible(sheet, id, values[id.0 as usize], site_pa)
+                        .or_else(|| outside(sheet, plan, evaluation, id, values, site_pa))
+                    {
                         findings.push(finding);
                     }
                 }
@@ -182,16 +188,24 @@ fn faults(sheet: &Sheet, plan: &Plan, evaluation: &Evaluation, values: &[f64], s
                     }
                     Ok(solved) => {
                         for id in &step.quantities {
-                            if let Some(finding) = out_of_model(sheet, *id, values).or_else(|| explain::impossible(sheet, *id, values[id.0 as usize], site_pa)) {
+                            if let Some(finding) =
+                                out_of_model(sheet, *id, values).or_else(|| explain::impossible(sheet, *id, values[id.0 as usize], site_pa))
+                            {
                                 findings.push(finding);
                                 break;
                             }
                         }
                         if !solved.others.is_empty() && findings.len() == before {
                             let id = plan.blocks[*at].unknowns[0].0;
-                            let others: Vec<String> = solved.others.iter().map(|other| explain::shown(sheet, id, *other, site_pa)).collect();
+                            let others: Vec<String> =
+                                solved.others.iter().map(|other| explain::shown(sheet, id, *other, site_pa)).collect();
                             let chosen = explain::shown(sheet, id, values[id.0 as usize], site_pa);
-                            findings.push(code::several_roots::chosen(sheet.quantity(id).span, &sheet.quantity(id).name, &chosen, &others.join(" and ")));
+                            findings.push(code::several_roots::chosen(
+                                sheet.quantity(id).span,
+                                &sheet.quantity(id).name,
+                                &chosen,
+                                &others.join(" and "),
+                            ));
                         }
                     }
                 },
@@ -217,10 +231,44 @@ fn out_of_model(sheet: &Sheet, id: QuantityId, values: &[f64]) -> Option<Diagnos
     let range = gas.caloric_range();
     let kelvin = |t_k: f64| format!("{} K", units::write_figures(t_k, 4));
     (t_k.is_finite() && t_k > 0.0 && !range.contains(t_k)).then(|| {
-        let limit = if t_k < range.limit_low_k { format!("from {} on", kelvin(range.limit_low_k)) } else { format!("up to {}", kelvin(range.limit_high_k)) };
-        let source = format!("published range {} to {}: {}", kelvin(range.low_k), kelvin(range.high_k), crate::gas::catalogue::caloric_source(gas));
+        let limit = if t_k < range.limit_low_k {
+            format!("from {} on", kelvin(range.limit_low_k))
+        } else {
+            format!("up to {}", kelvin(range.limit_high_k))
+        };
+        let source =
+            format!("published range {} to {}: {}", kelvin(range.low_k), kelvin(range.high_k), crate::gas::catalogue::caloric_source(gas));
         code::outside_model_range::beyond(entry.span, &entry.name, &kelvin(t_k), &limit, &source)
     })
+}
+
+/// A temperature that would have to lie outside the range in which the heat capacity of its gas is known.
+fn temperature_out_of_model(sheet: &Sheet, id: QuantityId, expression: ExprId, values: &[f64]) -> Option<Diagnostic> {
+    let (Origin::Property(state, _), Expr::Gas(function, gas, argument)) = (sheet.quantity(id).origin, sheet.exprs.get(expression)) else {
+        return None;
+    };
+    let word = match function {
+        GasFunction::TemperatureOfEnthalpy => "enthalpy",
+        GasFunction::TemperatureOfInternalEnergy => "internal energy",
+        GasFunction::TemperatureOfEntropy => "entropy at 100 kPa",
+        _ => return None,
+    };
+    let value = recheck::walk(sheet, values, argument).value;
+    if values[id.0 as usize].is_finite() || !value.is_finite() {
+        return None;
+    }
+    let (entry, range) = (sheet.state(state), sheet.gas(gas).gas.caloric_range());
+    let kelvin = |t_k: f64| format!("{} K", units::write_figures(t_k, 4));
+    let unit = if function == GasFunction::TemperatureOfEntropy { "J/(kg.K)" } else { "J/kg" };
+    let limit = format!("from {} to {}", kelvin(range.limit_low_k), kelvin(range.limit_high_k));
+    let source = format!(
+        "published range {} to {}: {}",
+        kelvin(range.low_k),
+        kelvin(range.high_k),
+        crate::gas::catalogue::caloric_source(&sheet.gas(gas).gas)
+    );
+    let at = format!("an {word} of {} {unit}", units::write_figures(value, 4));
+    Some(code::outside_model_range::beyond(entry.span, &entry.name, &at, &limit, &source))
 }
 
 /// A quantity in closed form that lies outside its bounds.
@@ -322,7 +370,9 @@ fn surplus_checks(
                 sheet.exprs.quantities(side, &mut |id| complete &= values[id.0 as usize].is_finite());
             }
             if complete {
-                findings.extend([relation.left, relation.right].into_iter().find_map(|side| explain::undefined(sheet, &values, side, span, 0.0)));
+                findings.extend(
+                    [relation.left, relation.right].into_iter().find_map(|side| explain::undefined(sheet, &values, side, span, 0.0)),
+                );
             }
             continue;
         }
@@ -367,13 +417,18 @@ fn conclude(
         }
     }
     let mut half_widths = widths.comparisons.iter().copied();
-    let assumptions: Vec<_> = sheet.assumptions.iter().map(|clause| judge::judge(sheet, &values, clause, &mut half_widths, site_pa)).collect();
-    let requirements: Vec<_> = sheet.requirements.iter().filter_map(|clause| judge::judge(sheet, &values, clause, &mut half_widths, site_pa)).collect();
-    let cautions: Vec<bool> =
-        sheet.cautions.iter().map(|clause| judge::judge(sheet, &values, clause, &mut half_widths, site_pa).is_none_or(|judged| judged.holds)).collect();
+    let assumptions: Vec<_> =
+        sheet.assumptions.iter().map(|clause| judge::judge(sheet, &values, clause, &mut half_widths, site_pa)).collect();
+    let requirements: Vec<_> =
+        sheet.requirements.iter().filter_map(|clause| judge::judge(sheet, &values, clause, &mut half_widths, site_pa)).collect();
+    let cautions: Vec<bool> = sheet
+        .cautions
+        .iter()
+        .map(|clause| judge::judge(sheet, &values, clause, &mut half_widths, site_pa).is_none_or(|judged| judged.holds))
+        .collect();
     let states: Vec<_> = (0..sheet.states.len()).map(|at| judge::state(sheet, &values, StateId(at as u32))).collect();
     extrapolated(sheet, &values, findings);
-    slip::slips(sheet, &values, &requirements, site_pa, findings);
+    slip::slips(sheet, &values, &plan.steps, &requirements, site_pa, findings);
     let steps: Vec<Step> = plan
         .steps
         .iter()
@@ -416,13 +471,21 @@ fn extrapolated(sheet: &Sheet, values: &[f64], findings: &mut Vec<Diagnostic>) {
         if !state.properties.iter().any(|(property, _)| property.is_caloric()) {
             continue;
         }
-        let Some((_, t)) = state.properties.iter().find(|(_, id)| sheet.quantity(*id).dimension == Dimension::TEMPERATURE) else { continue };
+        let Some((_, t)) = state.properties.iter().find(|(_, id)| sheet.quantity(*id).dimension == Dimension::TEMPERATURE) else {
+            continue;
+        };
         let t_k = values[t.0 as usize];
         let range = sheet.gas(state.gas).gas.caloric_range();
         if t_k.is_finite() && !range.is_published(t_k) {
             let kelvin = |t_k: f64| format!("{} K", units::write_figures(t_k, 4));
             let published = format!("{} to {}", kelvin(range.low_k), kelvin(range.high_k));
-            findings.push(code::outside_model_range::extrapolated(state.span, &state.name, &kelvin(t_k), &published, &crate::gas::catalogue::caloric_source(&sheet.gas(state.gas).gas)));
+            findings.push(code::outside_model_range::extrapolated(
+                state.span,
+                &state.name,
+                &kelvin(t_k),
+                &published,
+                &crate::gas::catalogue::caloric_source(&sheet.gas(state.gas).gas),
+            ));
         }
     }
 }

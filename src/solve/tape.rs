@@ -53,7 +53,12 @@ impl Op {
     fn operands(self) -> [Option<Slot>; 2] {
         match self {
             Self::Input(_) | Self::Constant(_) | Self::Unknown => [None, None],
-            Self::Negate(a) | Self::Integer(a, _) | Self::Half(a, _) | Self::Call(_, a) | Self::Gas(_, _, a) | Self::StandardPressure(a) => [Some(a), None],
+            Self::Negate(a)
+            | Self::Integer(a, _)
+            | Self::Half(a, _)
+            | Self::Call(_, a)
+            | Self::Gas(_, _, a)
+            | Self::StandardPressure(a) => [Some(a), None],
             Self::Add(a, b)
             | Self::Subtract(a, b)
             | Self::Multiply(a, b)
@@ -98,7 +103,9 @@ impl Tape {
         let op = match op {
             Op::Power(base, exponent) => match self.ops[exponent as usize] {
                 Op::Constant(value) if value.abs() <= LARGEST_POWER && value == value.round() => Op::Integer(base, value as i32),
-                Op::Constant(value) if value.abs() <= LARGEST_POWER && value * 2.0 == (value * 2.0).round() => Op::Half(base, (value * 2.0) as i32),
+                Op::Constant(value) if value.abs() <= LARGEST_POWER && value * 2.0 == (value * 2.0).round() => {
+                    Op::Half(base, (value * 2.0) as i32)
+                }
                 _ => op,
             },
             op => op,

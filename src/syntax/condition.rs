@@ -160,15 +160,14 @@ fn comparison_of_sign(sign: &str) -> Comparison {
 
 #[cfg(test)]
 mod tests {
-    use crate::syntax::{StatementKind, Tree, parse};
+    use crate::syntax::{Condition, ConditionKind, StatementKind, parse};
 
-    fn shape(tree: &Tree, condition: &crate::syntax::Condition) -> String {
-        use crate::syntax::ConditionKind::*;
+    fn shape(condition: &Condition) -> String {
         match &condition.kind {
-            Compare(_, sign, _) => sign.sign().to_owned(),
-            And(left, right) => format!("({} and {})", shape(tree, left), shape(tree, right)),
-            Or(left, right) => format!("({} or {})", shape(tree, left), shape(tree, right)),
-            Not(inner) => format!("not {}", shape(tree, inner)),
+            ConditionKind::Compare(_, sign, _) => sign.sign().to_owned(),
+            ConditionKind::And(left, right) => format!("({} and {})", shape(left), shape(right)),
+            ConditionKind::Or(left, right) => format!("({} or {})", shape(left), shape(right)),
+            ConditionKind::Not(inner) => format!("not {}", shape(inner)),
         }
     }
 
@@ -177,7 +176,7 @@ mod tests {
         let (tree, findings) = parse(&text);
         let found = findings.iter().map(|finding| (finding.code, finding.span.of(&text).to_owned())).collect();
         let StatementKind::Require { condition } = &tree.statements[0].kind else { return ("bad".to_owned(), found) };
-        (shape(&tree, condition), found)
+        (shape(condition), found)
     }
 
     #[test]

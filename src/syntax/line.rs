@@ -254,7 +254,11 @@ impl Scanner<'_> {
                 },
                 _ => {}
             }
-            self.signs += usize::from(matches!(byte, b'+' | b'-' | b'*' | b'/' | b'^' | b',' | b'=' | b'<' | b'>'));
+            self.signs += match byte {
+                b'+' | b'-' | b'*' | b'/' | b'^' | b',' | b'=' | b'<' | b'>' | b'"' => 1,
+                b'.' => usize::from(self.bytes.get(at + 1).is_some_and(u8::is_ascii_alphabetic)),
+                _ => 0,
+            };
             at += 1;
             if byte > b' ' {
                 open.end = at;

@@ -35,7 +35,9 @@ answer T_2
 pub(crate) fn finding(span: Span, word: &str, near: &[&str]) -> Diagnostic {
     let finding =
         Diagnostic::error(CODE, span, format!("`{word}` names nothing in this sheet")).label("no quantity, gas or state of this name");
-    suggest(finding, span, near, "declare it with `given`, `unknown` or `let`")
+    let declare = "declare it: `given NAME = VALUE` for an input, `unknown NAME in UNIT` for a quantity to be found";
+    let finding = if near.is_empty() { finding } else { finding.fact(declare) };
+    suggest(finding, span, near, declare)
 }
 
 /// A gas that no line declares, where a gas is expected.
@@ -54,4 +56,10 @@ pub(crate) fn not_a_quantity(span: Span, word: &str, what: &str, fields: &str) -
     Diagnostic::error(CODE, span, format!("`{word}` is a {what}, not a quantity of the sheet"))
         .label("a quantity is expected here")
         .help(help)
+}
+
+/// A word before a bracket that is no function.
+pub(crate) fn function(span: Span, word: &str, near: &[&str]) -> Diagnostic {
+    let finding = Diagnostic::error(CODE, span, format!("`{word}` is no function")).label("no function of this name");
+    suggest(finding, span, near, "functions are `sqrt cbrt exp ln log10 abs min max sin cos tan asin acos atan`; a product needs `*`")
 }

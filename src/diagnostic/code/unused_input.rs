@@ -41,5 +41,5 @@ pub(crate) fn finding(span: Span, name: &str) -> Diagnostic {
 pub(crate) fn result(span: Span, name: &str) -> Diagnostic {
     Diagnostic::warning(CODE, span, format!("nothing asks for `{name}`"))
         .label("found, but used by no line and no answer")
-        .help("add it to `answer`, or remove the line")
+        .help("add it to `answer`, or remove it with the line that finds it")
 }

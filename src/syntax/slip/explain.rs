@@ -255,7 +255,7 @@ impl<'a> Look<'a> {
         let gap = Span { start: self.before()?.span.end, end: here.span.start };
         let expected = format!("`{}`", word.trim());
         let finding = bad_line::finding(here.span, &format!("`{}`", self.shown(here)), &format!("{expected} before it"));
-        Some(finding.help(format!("put {expected} before `{}`", self.shown(here))).safe_edit(gap, word))
+        Some(finding.help(format!("put {expected} before `{}`", self.shown(here))).edit(gap, word))
     }
 
     /// A token as a finding can show it.
