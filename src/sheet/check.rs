@@ -5,7 +5,6 @@ use crate::diagnostic::{Diagnostic, Span, code};
 use crate::syntax::{BinaryOp, Function, StatementKind};
 use crate::units::{Dimension, Rational};
 
-use super::inference::constant_value;
 use super::reader::Reader;
 use super::value::{cut, folded};
 use super::{Expr, ExprId, Kind, Origin, QuantityId, RelationOrigin};
@@ -357,7 +356,7 @@ impl Reader<'_> {
                     return Err(());
                 };
                 let is_sum = |expr: ExprId| matches!(self.sheet.exprs.get(expr), Expr::Binary(BinaryOp::Add | BinaryOp::Subtract, ..));
-                let (sum, factor) = match (constant_value(&self.sheet, a), constant_value(&self.sheet, b)) {
+                let (sum, factor) = match (self.sheet.exprs.constant_value(a), self.sheet.exprs.constant_value(b)) {
                     (Some(factor), None) if op == BinaryOp::Multiply && left.dimension.is_none() && is_sum(b) => (right, factor),
                     (None, Some(factor)) if right.dimension.is_none() && is_sum(a) => {
                         (left, if op == BinaryOp::Multiply { factor } else { 1.0 / factor })
@@ -380,7 +379,7 @@ impl Reader<'_> {
                 if left.dimension.is_none() {
                     return Ok(Measure::of(Dimension::NONE));
                 }
-                let Some(exponent) = constant_value(&self.sheet, b) else {
+                let Some(exponent) = self.sheet.exprs.constant_value(b) else {
                     let finding = code::dimension_mismatch::base(self.place(a), &left.dimension.describe());
                     self.report(finding);
                     return Err(());

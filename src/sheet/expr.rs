@@ -115,6 +115,27 @@ impl Exprs {
         a.into_iter().chain(b)
     }
 
+    /// The value of an expression in which no quantity stands.
+    #[must_use]
+    pub fn constant_value(&self, id: ExprId) -> Option<f64> {
+        match self.get(id) {
+            Expr::Number(value, _) => Some(value),
+            Expr::Constant(constant) => Some(constant.value()),
+            Expr::Negate(a) => Some(-self.constant_value(a)?),
+            Expr::Binary(op, a, b) => {
+                let (a, b) = (self.constant_value(a)?, self.constant_value(b)?);
+                Some(match op {
+                    BinaryOp::Add => a + b,
+                    BinaryOp::Subtract => a - b,
+                    BinaryOp::Multiply => a * b,
+                    BinaryOp::Divide => a / b,
+                    BinaryOp::Power => crate::units::math::pow(a, b),
+                })
+            }
+            _ => None,
+        }
+    }
+
     /// Calls `visit` with every quantity below `id`, in the order written, as often as it stands there.
     pub fn quantities(&self, id: ExprId, visit: &mut impl FnMut(QuantityId)) {
         let mut open = vec![id];

@@ -90,7 +90,7 @@ impl Equations<'_> {
                     BinaryOp::Divide => left?.times(&right?, Rational::whole(-1)),
                     BinaryOp::Power => {
                         self.equal(right.as_ref(), Some(&Symbolic::default()));
-                        match constant_value(self.sheet, b).and_then(Rational::approximate) {
+                        match self.sheet.exprs.constant_value(b).and_then(Rational::approximate) {
                             Some(power) => left?.to_the(power),
                             None => {
                                 self.equal(left.as_ref(), Some(&Symbolic::default()));
@@ -120,26 +120,6 @@ impl Equations<'_> {
             }
             Expr::Gas(..) | Expr::StandardPressure(_) => None,
         }
-    }
-}
-
-/// The value of an expression that no quantity stands in.
-pub(super) fn constant_value(sheet: &Sheet, id: ExprId) -> Option<f64> {
-    match sheet.exprs.get(id) {
-        Expr::Number(value, _) => Some(value),
-        Expr::Constant(constant) => Some(constant.value()),
-        Expr::Negate(inner) => Some(-constant_value(sheet, inner)?),
-        Expr::Binary(op, a, b) => {
-            let (a, b) = (constant_value(sheet, a)?, constant_value(sheet, b)?);
-            Some(match op {
-                BinaryOp::Add => a + b,
-                BinaryOp::Subtract => a - b,
-                BinaryOp::Multiply => a * b,
-                BinaryOp::Divide => a / b,
-                BinaryOp::Power => crate::units::math::pow(a, b),
-            })
-        }
-        _ => None,
     }
 }
 

@@ -475,7 +475,7 @@ impl Sheet {
                     if base.is_none() {
                         return Some(base);
                     }
-                    let exponent = super::inference::constant_value(self, b).and_then(Rational::approximate)?;
+                    let exponent = self.exprs.constant_value(b).and_then(Rational::approximate)?;
                     base.power(exponent)
                 }
             },

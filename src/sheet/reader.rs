@@ -11,6 +11,9 @@ use super::{ExprId, GasId, Kind, Origin, Property, Quantity, QuantityId, Relatio
 /// Errors after which reading stops: they are the work of a program, and more of them help nobody.
 const MOST_ERRORS: usize = 1000;
 
+/// Comparisons of names for suggestions in one sheet: a second's worth.
+const MOST_COMPARISONS: usize = 1_000_000;
+
 /// What a name stands for.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub(super) enum Meaning {
@@ -62,6 +65,8 @@ pub(super) struct Reader<'a> {
     pub(super) site: Site,
     pub(super) references_missing: [bool; 3],
     pub(super) statement: usize,
+    /// Comparisons of names that may still be made for suggestions.
+    pub(super) comparisons_left: usize,
     /// Errors told so far.
     pub(super) errors: usize,
     /// Reading ended early because of too many of them.
@@ -112,6 +117,7 @@ pub fn read(tree: &Tree, text: &str) -> (Sheet, Vec<Diagnostic>) {
         site: Site::default(),
         references_missing: [false; 3],
         statement: 0,
+        comparisons_left: MOST_COMPARISONS,
         errors: 0,
         stopped: false,
     };

@@ -113,7 +113,7 @@ fn invert(exprs: &mut Exprs, side: ExprId, other: ExprId, x: QuantityId, nonnega
 
 /// `base^exponent = target`, x in the base.
 fn root(exprs: &mut Exprs, base: ExprId, exponent: ExprId, target: ExprId, x: QuantityId, nonnegative: bool) -> ClosedForm {
-    let whole = constant(exprs, exponent);
+    let whole = exprs.constant_value(exponent);
     let positive = match whole {
         Some(0.0) => return ClosedForm::None,
         Some(2.0) => exprs.add(Expr::Call(Function::Sqrt, target, None)),
@@ -150,26 +150,6 @@ fn both_signs(exprs: &mut Exprs, inner: ExprId, target: ExprId, x: QuantityId, n
     }
 }
 
-/// The value of an expression in which no quantity stands.
-pub(super) fn constant(exprs: &Exprs, id: ExprId) -> Option<f64> {
-    match exprs.get(id) {
-        Expr::Number(value, _) => Some(value),
-        Expr::Constant(constant) => Some(constant.value()),
-        Expr::Negate(a) => Some(-constant(exprs, a)?),
-        Expr::Binary(op, a, b) => {
-            let (a, b) = (constant(exprs, a)?, constant(exprs, b)?);
-            Some(match op {
-                BinaryOp::Add => a + b,
-                BinaryOp::Subtract => a - b,
-                BinaryOp::Multiply => a * b,
-                BinaryOp::Divide => a / b,
-                BinaryOp::Power => crate::units::math::pow(a, b),
-            })
-        }
-        _ => None,
-    }
-}
-
 /// An expression that is `free + slope x`; `None` stands for zero.
 #[derive(Clone, Copy)]
 struct Linear {
@@ -184,7 +164,7 @@ fn collect(exprs: &mut Exprs, left: ExprId, right: ExprId, x: QuantityId) -> Clo
     let slope = difference(exprs, left.slope, right.slope);
     match (slope, numerator) {
         (None, _) => ClosedForm::DropsOut,
-        (Some(slope), _) if constant(exprs, slope) == Some(0.0) => ClosedForm::DropsOut,
+        (Some(slope), _) if exprs.constant_value(slope) == Some(0.0) => ClosedForm::DropsOut,
         (Some(slope), Some(numerator)) => ClosedForm::One(exprs.binary(BinaryOp::Divide, numerator, slope)),
         (Some(_), None) => ClosedForm::One(exprs.number(0.0)),
     }

@@ -237,6 +237,19 @@ pub(super) fn fault(sheet: &Sheet, fault: &Fault, relations: &[usize], quantitie
                 &tried,
                 &format!("the largest scaled residual left is {largest}, in {line}"),
             );
+            // What nothing is said of leaves the search widest.
+            let unguided = quantities
+                .iter()
+                .map(|id| sheet.quantity(*id))
+                .find(|quantity| quantity.near.is_none() && (quantity.low.is_none() || quantity.high.is_none()));
+            if let Some(quantity) = unguided {
+                let unit = quantity.shown.text();
+                let name = &quantity.name;
+                finding = finding.help(format!(
+                    "say about how large `{name}` is: `near …{}{unit}` behind its `unknown`, or bounds with `within`",
+                    if unit.is_empty() { "" } else { " " }
+                ));
+            }
             if !at_bound.is_empty() {
                 let names: Vec<String> = at_bound.iter().map(|id| sheet.quantity(*id).name.clone()).collect();
                 finding = finding.fact(format!("the search ran into the bounds of {}", list(&names)));

@@ -224,7 +224,7 @@ impl Compiler<'_> {
             return form.clone();
         }
         let entry = self.sheet.quantity(quantity);
-        let bounded = entry.low.and_then(|low| super::closed_form::constant(&self.sheet.exprs, low)).is_some_and(|low| low >= 0.0);
+        let bounded = entry.low.and_then(|low| self.sheet.exprs.constant_value(low)).is_some_and(|low| low >= 0.0);
         let nonnegative = bounded || physics::is_taken_positive(entry);
         let (left, right) = (self.sheet.relations[relation].left, self.sheet.relations[relation].right);
         let form = solve_for(&mut self.sheet.exprs, left, right, quantity, nonnegative);
@@ -400,7 +400,7 @@ impl Compiler<'_> {
                     BinaryOp::Multiply => Op::Multiply(a, b),
                     BinaryOp::Divide => Op::Divide(a, b),
                     BinaryOp::Power => {
-                        let b = match super::closed_form::constant(&self.sheet.exprs, self.binary_right(id)) {
+                        let b = match self.sheet.exprs.constant_value(self.binary_right(id)) {
                             Some(value) => self.plan.tape.push(Op::Constant(value)),
                             None => b,
                         };

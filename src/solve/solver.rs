@@ -17,6 +17,9 @@ const LARGEST_RESIDUAL: f64 = 1e-8;
 /// What rounding allows a relation that was not needed to be off by, relative to the size of its terms.
 const ROUNDING: f64 = 1e-9;
 
+/// Errors of one kind that are told; more of them are the work of a program and help nobody.
+const MOST_ERRORS: usize = 1000;
+
 /// Coverage of the difference that the uncertainties of the inputs allow (JCGM 100:2008, 6.2.1: about 95 %).
 const COVERAGE: f64 = 2.0;
 
@@ -78,15 +81,20 @@ fn analyse(sheet: &Sheet) -> Analysed {
 }
 
 fn missing(sheet: &Sheet, analysed: &Analysed) -> Vec<Diagnostic> {
-    analysed
-        .structure
-        .missing
+    let parts = &analysed.structure.missing;
+    let untold = parts.get(MOST_ERRORS).and_then(|part| part.columns.first()).map(|column| {
+        let place = sheet.quantity(analysed.quantities[*column as usize]).span;
+        code::too_many_errors::finding(place, parts.len() - MOST_ERRORS)
+    });
+    parts
         .iter()
+        .take(MOST_ERRORS)
         .map(|part| {
             let quantities: Vec<QuantityId> = part.columns.iter().map(|column| analysed.quantities[*column as usize]).collect();
             let relations: Vec<usize> = part.rows.iter().map(|row| analysed.relations[*row as usize]).collect();
             explain::missing(sheet, part, &quantities, &relations)
         })
+        .chain(untold)
         .collect()
 }
 
@@ -387,6 +395,9 @@ fn surplus_checks(
                 continue;
             }
             conflicts.extend(&part);
+            if conflicts.len() > MOST_ERRORS {
+                continue;
+            }
             findings.push(explain::conflict(sheet, residual.relation, difference, allowed, inputs, &part));
         }
     }
