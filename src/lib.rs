@@ -1,6 +1,6 @@
 //! gaswright: gas calculations that a colleague can check.
 //!
-//! A sheet is a text of given quantities and unordered relations. [`solve`] takes it the whole way, and this is the way:
+//! A sheet is a text of given quantities and unordered relations. [`solve()`] takes it the whole way, and this is the way:
 //!
 //! ```text
 //! text ──syntax──▶ Tree ──sheet──▶ Sheet ──solve──▶ Solution ──report──▶ md · html · json

@@ -18,7 +18,7 @@ pub const DEEPEST_BRACKETS: usize = 100;
 pub const MOST_OPERATORS: usize = 1_000;
 
 /// Most statements in a file.
-pub const MOST_STATEMENTS: usize = 500_000;
+pub const MOST_STATEMENTS: usize = 250_000;
 
 /// Most comments in a file.
 pub const MOST_COMMENTS: usize = 1_000_000;

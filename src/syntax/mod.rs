@@ -2,8 +2,8 @@
 //!
 //! Text comes in; a tree and all findings of the file come out. No meaning is judged here: whether a name is known, a unit
 //! exists or dimensions agree is for the rooms behind. Read in this order: [`tree`] is the product; [`parse()`] the way
-//! to it (head, logical lines, each by its own rule of `grammar/sheet.pest`); [`slip`] says why a line cannot be read;
-//! [`layout`] writes statements in their canonical form, one by one or a whole file.
+//! to it (head, logical lines, each by its own rule of `grammar/sheet.pest`); `slip` says why a line cannot be read;
+//! `layout` writes statements in their canonical form, one by one or a whole file.
 //!
 //! Statements are checked each on its own. A bad one stays in the tree as `Bad` with the name that it would have
 //! declared, so that later uses of the name stay silent. Limits on size and depth ([`limits`]) are counted before the

@@ -9,7 +9,7 @@ pub(crate) const CODE: &str = "too-many";
 pub(crate) const PAGE: &str = r##"
 # Too many statements, comments or terms
 
-A sheet may have 500 000 statements, 1 000 000 comments and 3 000 000 terms. A file with more is refused as a whole, since
+A sheet may have 250 000 statements, 1 000 000 comments and 3 000 000 terms. A file with more is refused as a whole, since
 part of a calculation is no calculation.
 
 Split the sheet.
