@@ -13,7 +13,9 @@ fuzz_target!(|bytes: &[u8]| {
     let Ok(tidied) = syntax::tidy(&text) else { panic!("tidy refuses what the parser takes: {text:?}") };
     let (again, findings) = syntax::parse(&tidied);
     assert!(!findings.iter().any(gaswright::diagnostic::Diagnostic::is_error), "tidy breaks the sheet:\n{text}\n---\n{tidied}");
-    let canonical = |tree: &syntax::Tree, text: &str| -> Vec<String> { tree.statements.iter().map(|statement| syntax::canonical(tree, text, statement)).collect() };
+    let canonical = |tree: &syntax::Tree, text: &str| -> Vec<String> {
+        tree.statements.iter().map(|statement| syntax::canonical(tree, text, statement)).collect()
+    };
     assert_eq!(canonical(&tree, &text), canonical(&again, &tidied), "tidy changes the meaning");
     assert_eq!(syntax::tidy(&tidied).ok().as_deref(), Some(tidied.as_str()), "tidy is not its own layout");
 });
