@@ -30,7 +30,7 @@ impl RealGas {
     /// T and rho on an isobar: Newton's method in T, kept in a bracket, on a property that rises (density: falls) with T. The lower end of the gas
     /// is looked for only when a step runs into it.
     pub(super) fn on_isobar(&self, p_pa: f64, (property, target): (Property, f64)) -> Result<(f64, f64), StateError> {
-        let (mut low, mut high) = self.temperatures();
+        let (mut low, mut high) = self.temperatures(property);
         let sign = if property == Property::Density { -1.0 } else { 1.0 };
         if let Some(equation) = self.equation()
             && p_pa >= equation.constants().p_c_own_pa
@@ -73,7 +73,7 @@ impl RealGas {
                 Err(_) => low,
             };
             let change = (next - t_k).abs() / t_k;
-            if found.is_ok() && (change < STEP || (change < ROUNDING && change >= last)) && next >= self.temperatures().0 {
+            if found.is_ok() && (change < STEP || (change < ROUNDING && change >= last)) && next >= self.temperatures(property).0 {
                 return match self.density_unchecked(next, p_pa) {
                     Ok(rho) => Ok((next, rho)),
                     // Rounding has carried the last step over the saturation line.
@@ -183,7 +183,7 @@ impl RealGas {
 
     /// T on an isochore: h, u and s rise with T where the density is that of a gas.
     pub(super) fn on_isochore(&self, rho: f64, (property, target): (Property, f64)) -> Result<f64, StateError> {
-        let (mut low, mut high) = self.temperatures();
+        let (mut low, mut high) = self.temperatures(property);
         let of = |t_k: f64| self.values(t_k, rho).get(property);
         let wrong = || self.no_state((Property::Density, rho), (property, target));
         let mut wet = None;

@@ -117,16 +117,20 @@ impl RealGas {
         StateError::NoSuchState { properties: [(a.0.symbol(), a.1), (b.0.symbol(), b.1)] }
     }
 
-    /// Temperatures between which a gas is sought.
-    pub(super) fn temperatures(&self) -> (f64, f64) {
+    /// Temperatures between which a gas with a property is sought.
+    pub(super) fn temperatures(&self, property: Property) -> (f64, f64) {
         let range = self.range();
-        (range.t_limit_low_k, range.t_limit_high_k)
+        let whole = (range.t_limit_low_k, range.t_limit_high_k);
+        match property {
+            Property::Pressure | Property::Temperature | Property::Density | Property::Volume => whole,
+            _ => self.caloric_range_k().unwrap_or(whole),
+        }
     }
 
     /// T and rho from two of h, u and s: Newton's method in ln T and ln rho from the ideal gas and from a net of other starts. All gas states
     /// that are found count; two different ones are an error.
     fn by_two_calorics(&self, a: (Property, f64), b: (Property, f64)) -> Result<(f64, f64), StateError> {
-        let (low, high) = self.temperatures();
+        let (low, high) = self.temperatures(Property::Enthalpy);
         let mut found: Option<(f64, f64)> = None;
         let mut refused = None;
         // From h and u alone p v follows, and a gas may have two states; h and s, u and s have one.
@@ -155,7 +159,7 @@ impl RealGas {
 
     /// Starts of a search: the ideal gas by its own properties on a net of temperatures and densities, the nearest first.
     fn starts(&self, a: (Property, f64), b: (Property, f64)) -> Vec<(f64, f64)> {
-        let (low, high) = self.temperatures();
+        let (low, high) = self.temperatures(Property::Enthalpy);
         let r = self.gas_constant_j_kg_k();
         let critical = self.critical_point().map_or(1.0, |(t_c, p_c)| p_c / (0.29 * r * t_c));
         let mut starts = Vec::new();
@@ -202,7 +206,7 @@ impl RealGas {
 
     fn newton(&self, a: (Property, f64), b: (Property, f64), t_start: f64, rho_start: f64) -> Option<(f64, f64)> {
         let (mut t_k, mut rho) = (t_start, rho_start);
-        let (low, high) = self.temperatures();
+        let (low, high) = self.temperatures(Property::Enthalpy);
         let mut last = f64::INFINITY;
         for _ in 0..MOST_STEPS {
             let state = self.values(t_k, rho);

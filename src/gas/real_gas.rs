@@ -312,7 +312,7 @@ impl RealGas {
     }
 
     /// All properties at a temperature, K, and a density, kg/m³, with their slopes. Phase and range are not looked at; what has no value (a
-    /// heat capacity of a gas without caloric data, a speed of sound between the spinodals) is not a number.
+    /// heat capacity outside [`Self::caloric_range_k`], a speed of sound between the spinodals) is not a number.
     #[must_use]
     pub fn properties(&self, t_k: f64, rho_kg_m3: f64) -> StateProperties {
         match &self.0.model {
@@ -328,6 +328,19 @@ impl RealGas {
             Model::Gerg(gerg) => gerg.values(t_k, rho_kg_m3),
             _ => self.properties(t_k, rho_kg_m3),
         }
+    }
+
+    /// Lowest and highest temperature, K, at which h, u, s, cp, cv, k and w have values; `None` for a gas with [`Self::without_caloric`].
+    ///
+    /// Those of [`Self::range`], but for Peng and Robinson's equation, where the heat capacities of the components may end before.
+    #[must_use]
+    pub fn caloric_range_k(&self) -> Option<(f64, f64)> {
+        let range = self.range();
+        let (low, high) = match &self.0.model {
+            Model::PengRobinson(cubic) => cubic.caloric_range()?,
+            _ => (0.0, f64::INFINITY),
+        };
+        Some((range.t_limit_low_k.max(low), range.t_limit_high_k.min(high)))
     }
 
     /// Name of a component without caloric data: then only p, v, rho, T and Z have values.

@@ -12,6 +12,7 @@ mod gas_mixing;
 mod isentropic_flow;
 mod molar_volume;
 mod nonlinear_systems;
+mod real_gas;
 mod reference_volume;
 mod relief_area;
 mod unit_factors;

@@ -114,7 +114,10 @@ impl Equation {
         let (r, t_c, p_c, omega) = (constants.r_j_mol_k, constants.t_c_k, constants.p_c_pa, constants.omega);
         let kappa = 0.374_64 + omega * (1.542_26 - 0.269_92 * omega);
         let cubic = (0.457_235 * r * r * t_c * t_c / p_c, 0.077_796 * r * t_c / p_c, kappa);
-        Some(Self { t_reducing_k: record.tc, rho_reducing: record.rhoc, constants, ideal, residual, start, solid, cubic })
+        let mut one = Self { t_reducing_k: record.tc, rho_reducing: record.rhoc, constants, ideal, residual, start, solid, cubic };
+        // The table has six decimals of a kelvin, which are 1e-8 of the pressure: the line ends at that of the equation for them.
+        one.constants.p_c_own_pa = one.isotherm(one.constants.t_c_own_k).pressure(one.constants.rho_c_own_mol_m3).0;
+        Some(one)
     }
 
     /// The equation of a gas by the name of the table; `None` for a gas without one. It is read at the first call.

@@ -131,6 +131,18 @@ impl PengRobinson {
         self.parts.iter().find(|part| matches!(part.ideal, IdealSource::None)).map(|part| part.species.name)
     }
 
+    /// Temperatures between which every component has caloric properties, K; `None` where one has none.
+    pub(crate) fn caloric_range(&self) -> Option<(f64, f64)> {
+        self.parts.iter().try_fold((0.0_f64, f64::INFINITY), |(low, high), part| match &part.ideal {
+            IdealSource::Equation(_) => Some((low, high)),
+            IdealSource::Polynomials(gas) => {
+                let range = gas.caloric_range();
+                Some((low.max(range.limit_low_k), high.min(range.limit_high_k)))
+            }
+            IdealSource::None => None,
+        })
+    }
+
     /// Saturation pressure of a component over the pressure, as a first guess (Wilson 1969, from memory).
     pub(crate) fn volatility(&self, index: usize, t_k: f64, p_pa: f64) -> f64 {
         let part = &self.parts[index];
