@@ -4,7 +4,7 @@ use crate::diagnostic::LineIndex;
 use crate::diagnostic::json::FindingObject;
 use crate::sheet::{Origin, Quantity, QuantityId, Reading, StateId, write_expr};
 use crate::solve::{Method, Solution, Step};
-use crate::syntax::{Model, Shape};
+use crate::syntax::Shape;
 
 use super::object::{
     AnswerObject, AssumptionObject, CautionObject, ChecksObject, CorrelationObject, QuantityObject, RequirementObject, ResultObject,
@@ -131,7 +131,7 @@ impl Maker<'_> {
                 StateObject {
                     name: state.name.clone(),
                     gas: gas.gas.title(),
-                    model: model_word(gas.model),
+                    model: gas.model.word(),
                     line: self.input.line(self.lines, state.statement),
                     ideal_error_percent: verdict.and_then(|verdict| verdict.ideal_error_percent),
                     verdict: verdict.map(|verdict| verdict.verdict.word()),
@@ -231,13 +231,5 @@ fn origin(quantity: &Quantity) -> &'static str {
         "constant"
     } else {
         "solved"
-    }
-}
-
-/// The word of a gas model.
-pub(super) fn model_word(model: Model) -> &'static str {
-    match model {
-        Model::Ideal => "ideal",
-        Model::Real => "real",
     }
 }

@@ -7,7 +7,7 @@ use crate::units::{Dimension, Rational};
 
 use super::reader::Reader;
 use super::value::{cut, folded};
-use super::{Expr, ExprId, Kind, Origin, QuantityId, RelationOrigin};
+use super::{Expr, ExprId, GasFunction, Kind, Origin, QuantityId, RelationOrigin};
 
 /// Rounding allowed where temperatures or pressures are counted.
 const COUNT_TOLERANCE: f64 = 1e-9;
@@ -295,7 +295,9 @@ impl Reader<'_> {
             }
             Expr::Binary(op, a, b) => self.measure_binary(id, op, a, b),
             Expr::Call(function, a, b) => self.measure_call(id, function, a, b),
-            Expr::Gas(..) | Expr::StandardPressure(_) => Ok(Measure::of(Dimension::NONE)),
+            Expr::Gas(GasFunction::SaturationPressure, _, a) => self.saturation(a, "p_sat", Dimension::TEMPERATURE, Dimension::PRESSURE),
+            Expr::Gas(GasFunction::SaturationTemperature, _, a) => self.saturation(a, "T_sat", Dimension::PRESSURE, Dimension::TEMPERATURE),
+            Expr::Gas(..) | Expr::State(..) | Expr::StandardPressure(_) => Ok(Measure::of(Dimension::NONE)),
         }
     }
 
@@ -431,6 +433,21 @@ impl Reader<'_> {
                 Err(())
             }
         }
+    }
+
+    /// A function of the saturation line: it takes and gives absolute values.
+    fn saturation(&mut self, a: ExprId, word: &str, takes: Dimension, gives: Dimension) -> Result<Measure, ()> {
+        let argument = self.measure(a)?;
+        let place = self.place(a);
+        if argument.dimension != takes {
+            self.report(code::dimension_mismatch::argument_of(place, word, &argument.dimension.describe(), &takes.describe()));
+            return Err(());
+        }
+        if argument.count.is_some_and(|(_, most)| most < 0.5) {
+            self.report(code::kind_mismatch::argument(place, word, &takes.describe()));
+            return Err(());
+        }
+        Ok(Measure::of_kind(gives, Kind::Absolute, false))
     }
 
     /// Checks the sides of a comparison: dimension and kind. The dimension of both where they agree.

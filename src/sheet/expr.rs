@@ -2,7 +2,7 @@
 
 use crate::syntax::{BinaryOp, Function};
 
-use super::{GasId, QuantityId};
+use super::{GasId, Property, QuantityId};
 
 /// An expression of a sheet, by its place in the arena.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash, PartialOrd, Ord)]
@@ -25,6 +25,30 @@ pub enum GasFunction {
     InternalEnergy,
     /// Temperature that belongs to an internal energy.
     TemperatureOfInternalEnergy,
+    /// Saturation pressure at a temperature, by the reference equation of the gas.
+    SaturationPressure,
+    /// Saturation temperature at a pressure: the inverse of [`Self::SaturationPressure`].
+    SaturationTemperature,
+}
+
+/// A property of a gas by the properties that fix its state: `h(T, p)` and, the other way round, `T(h, p)`.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
+pub struct StateFunction {
+    /// What it gives.
+    pub of: Property,
+    /// The property of the first argument.
+    pub x: Property,
+    /// The property of the second.
+    pub y: Property,
+    /// Of humid air: the property of the third, which says how moist it is.
+    pub moisture: Option<Property>,
+}
+
+impl StateFunction {
+    /// The properties of its arguments, in their order.
+    pub fn arguments(self) -> impl Iterator<Item = Property> {
+        [Some(self.x), Some(self.y), self.moisture].into_iter().flatten()
+    }
 }
 
 /// A named constant.
@@ -59,6 +83,8 @@ pub enum Expr {
     Call(Function, ExprId, Option<ExprId>),
     /// A function of a gas.
     Gas(GasFunction, GasId, ExprId),
+    /// A property of a gas by two others, of humid air by three; the third argument repeats the second where there are two.
+    State(StateFunction, GasId, [ExprId; 3]),
     /// Pressure of the standard atmosphere at an altitude (ISO 2533).
     StandardPressure(ExprId),
 }
@@ -106,13 +132,14 @@ impl Exprs {
 
     /// The parts of an expression, left first.
     pub fn parts(&self, id: ExprId) -> impl Iterator<Item = ExprId> + use<> {
-        let (a, b) = match self.get(id) {
-            Expr::Number(..) | Expr::Constant(_) | Expr::Quantity(_) => (None, None),
-            Expr::Negate(a) | Expr::Gas(_, _, a) | Expr::StandardPressure(a) => (Some(a), None),
-            Expr::Binary(_, a, b) => (Some(a), Some(b)),
-            Expr::Call(_, a, b) => (Some(a), b),
+        let (a, b, c) = match self.get(id) {
+            Expr::Number(..) | Expr::Constant(_) | Expr::Quantity(_) => (None, None, None),
+            Expr::Negate(a) | Expr::Gas(_, _, a) | Expr::StandardPressure(a) => (Some(a), None, None),
+            Expr::Binary(_, a, b) => (Some(a), Some(b), None),
+            Expr::Call(_, a, b) => (Some(a), b, None),
+            Expr::State(function, _, [a, b, c]) => (Some(a), Some(b), function.moisture.map(|_| c)),
         };
-        a.into_iter().chain(b)
+        a.into_iter().chain(b).chain(c)
     }
 
     /// The value of an expression in which no quantity stands.

@@ -1,12 +1,13 @@
 //! Lowers expressions: names become quantities, literals become SI numbers.
 
 use crate::diagnostic::{Span, code, nearest};
+use crate::gas::saturation::has_saturation_line;
 use crate::syntax::{self, BinaryOp, ExprKind, Function, Literal, Path, Within};
 use crate::units::Unit;
 
 use super::reader::{LiteralInfo, Meaning, Reader};
 use super::value::folded;
-use super::{Constant, Expr, ExprId, GasId, Kind, Origin, Property, QuantityId, ShownLiteral, ShownUnit, StateId};
+use super::{Constant, Expr, ExprId, GasFunction, GasId, GasModel, Kind, Origin, Property, QuantityId, ShownLiteral, ShownUnit, StateId};
 
 /// The constants of the language.
 const CONSTANTS: [(&str, Constant); 5] = [
@@ -19,6 +20,10 @@ const CONSTANTS: [(&str, Constant); 5] = [
 
 /// The constants that a gas offers as fields.
 const GAS_FIELDS: [&str; 4] = ["M", "R", "T_c", "p_c"];
+
+/// The functions that a gas with a saturation line offers, and what each takes.
+const GAS_FUNCTIONS: [(&str, GasFunction, &str); 2] =
+    [("p_sat", GasFunction::SaturationPressure, "the temperature"), ("T_sat", GasFunction::SaturationTemperature, "the pressure")];
 
 /// What a path stands for in an expression.
 pub(super) enum Target {
@@ -56,22 +61,17 @@ impl Reader<'_> {
             }
             ExprKind::Call(function, _, arguments) => self.call(*function, arguments, span),
             ExprKind::CallPath(path, arguments) => {
-                for argument in arguments {
-                    self.lower(*argument);
+                let lowered: Vec<Option<ExprId>> = arguments.iter().map(|argument| self.lower(*argument)).collect();
+                let function = self.saturation_function(path, arguments.len());
+                match (function, lowered.as_slice()) {
+                    (Some((function, gas)), [Some(argument)]) => Some(self.expr(Expr::Gas(function, gas, *argument), span)),
+                    _ => {
+                        for argument in lowered.into_iter().flatten() {
+                            self.poison_below(argument);
+                        }
+                        None
+                    }
                 }
-                if path.field.is_none() {
-                    let word = tree.names.text(path.base.name);
-                    let near = nearest(word, Function::ALL.iter().map(|function| function.word()));
-                    self.report(code::unknown_name::function(path.base.span, word, &near));
-                    return None;
-                }
-                let what = format!("the function `{}`", path.span().of(self.text));
-                self.report(code::not_offered::finding(
-                    path.span(),
-                    &what,
-                    "saturation needs the reference equation of the gas; give the pressure or temperature as an input",
-                ));
-                None
             }
         }
     }
@@ -188,6 +188,54 @@ impl Reader<'_> {
         }
     }
 
+    /// The function that a path with arguments stands for: one that a gas with a saturation line offers.
+    fn saturation_function(&mut self, path: &Path, n_arguments: usize) -> Option<(GasFunction, GasId)> {
+        let tree = self.tree;
+        let word = tree.names.text(path.base.name);
+        let Some(field) = path.field else {
+            let near = nearest(word, Function::ALL.iter().map(|function| function.word()));
+            self.report(code::unknown_name::function(path.base.span, word, &near));
+            return None;
+        };
+        let gas = match self.names.get(&path.base.name).map(|(meaning, _)| *meaning) {
+            Some(Meaning::Gas(gas)) => gas,
+            Some(Meaning::Poisoned) => return None,
+            Some(other) => {
+                self.report(code::unknown_field::no_function(path.span(), word, other.word()));
+                return None;
+            }
+            None => {
+                // Told as any other name that is missing.
+                self.target(&Path { base: path.base, field: None });
+                return None;
+            }
+        };
+        let field_text = tree.names.text(field.name);
+        let Some((_, function, argument)) = GAS_FUNCTIONS.into_iter().find(|(known, ..)| *known == field_text) else {
+            let near = nearest(field_text, GAS_FUNCTIONS.into_iter().map(|(known, ..)| known));
+            self.report(code::unknown_field::finding(
+                field.span,
+                word,
+                "gas",
+                field_text,
+                &near,
+                "the functions `p_sat(T)` and `T_sat(p)`",
+            ));
+            return None;
+        };
+        if n_arguments != 1 {
+            self.report(code::argument_count::finding(path.span(), field_text, &format!("one argument, {argument}")));
+            return None;
+        }
+        let entry = self.sheet.gas(gas);
+        if !entry.gas.species().is_some_and(has_saturation_line) {
+            let title = if matches!(entry.model, GasModel::HumidAir(_)) { "humid air".to_owned() } else { entry.gas.title() };
+            self.report(code::no_gas_data::saturation(path.span(), &title));
+            return None;
+        }
+        Some((function, gas))
+    }
+
     fn near_names(&mut self, word: &str) -> Vec<String> {
         // A sheet of very many names and errors was written by a program: guessing for each would cost their product.
         let cost = self.names.len();
@@ -225,7 +273,12 @@ impl Reader<'_> {
         };
         let id = self.gas_constant(gas, field);
         if id.is_none() {
-            self.report(code::unknown_field::finding(span, owner, "gas", field, &[], "`M` and `R`; its critical point is not known here"));
+            let offers = if matches!(self.sheet.gas(gas).model, GasModel::HumidAir(_)) {
+                "no constants: they change with its moisture"
+            } else {
+                "`M` and `R`; its critical point is not known here"
+            };
+            self.report(code::unknown_field::finding(span, owner, "gas", field, &[], offers));
         }
         id
     }
@@ -236,13 +289,25 @@ impl Reader<'_> {
             return Some(*id);
         }
         let entry = self.sheet.gas(gas);
-        let (value, si, shown, word) = match field {
-            "M" => (Some(entry.gas.molar_mass().value), crate::units::Dimension::MOLAR_MASS, "g/mol", "Molar mass"),
-            "R" => {
-                (Some(entry.gas.specific_gas_constant().value), crate::units::Dimension::SPECIFIC_HEAT_CAPACITY, "J/(kg.K)", "Gas constant")
+        let [molar_mass, gas_constant, t_c, p_c] = match &entry.model {
+            GasModel::Real(real) => {
+                let (t_c, p_c) = real.critical_point().unzip();
+                [Some(real.molar_mass_kg_mol()), Some(real.gas_constant_j_kg_k()), t_c, p_c]
             }
-            "T_c" => (entry.gas.critical_temperature().map(|t| t.value), crate::units::Dimension::TEMPERATURE, "K", "Critical temperature"),
-            _ => (entry.gas.critical_pressure().map(|p| p.value), crate::units::Dimension::PRESSURE, "Pa", "Critical pressure"),
+            GasModel::Ideal => [
+                Some(entry.gas.molar_mass_kg_mol()),
+                Some(entry.gas.gas_constant_j_kg_k()),
+                entry.gas.critical_temperature().map(|t| t.value),
+                entry.gas.critical_pressure().map(|p| p.value),
+            ],
+            // Both change with the moisture, from state to state.
+            GasModel::HumidAir(_) => [None; 4],
+        };
+        let (value, si, shown, word) = match field {
+            "M" => (molar_mass, crate::units::Dimension::MOLAR_MASS, "g/mol", "Molar mass"),
+            "R" => (gas_constant, crate::units::Dimension::SPECIFIC_HEAT_CAPACITY, "J/(kg.K)", "Gas constant"),
+            "T_c" => (t_c, crate::units::Dimension::TEMPERATURE, "K", "Critical temperature"),
+            _ => (p_c, crate::units::Dimension::PRESSURE, "Pa", "Critical pressure"),
         };
         let value = value?;
         let (name, statement, title) = (format!("{}.{field}", entry.name), entry.statement, entry.gas.title());
@@ -267,15 +332,10 @@ impl Reader<'_> {
     /// The property of a field, told where there is none.
     pub(super) fn property_of(&mut self, owner: &str, field: &str, span: Span) -> Option<Property> {
         match Property::of_field(field) {
-            Some(property @ (Property::Mu | Property::Lambda)) => {
-                let what = format!("`{field}` of a state, its {},", property.row().word);
-                self.report(code::not_offered::finding(span, &what, "give it as an input with its source"));
-                None
-            }
             Some(property) => Some(property),
             None => {
                 let near = nearest(field, Property::ROWS.iter().map(|row| row.field));
-                self.report(code::unknown_field::finding(span, owner, "state", field, &near, "`p T v rho h u s cp cv k w Z`"));
+                self.report(code::unknown_field::finding(span, owner, "state", field, &near, "`p T v rho h u s cp cv k w Z mu lambda`"));
                 None
             }
         }
@@ -301,7 +361,7 @@ impl Reader<'_> {
         quantity.description = format!("{word}{title}");
         quantity.source = String::new();
         quantity.dimension = property.row().dimension;
-        quantity.kind = if matches!(property, Property::P | Property::T) { Kind::Absolute } else { Kind::Plain };
+        quantity.kind = if property.is_absolute() { Kind::Absolute } else { Kind::Plain };
         quantity.shown = super::value::si_unit(quantity.dimension, quantity.kind);
         self.properties.insert((state, property), id);
         id

@@ -11,7 +11,7 @@ use crate::syntax::{BinaryOp, Function};
 use crate::units::{Dimension, Rational};
 
 use super::reader::Reader;
-use super::{Expr, ExprId, Kind, QuantityId, RelationOrigin, Sheet};
+use super::{Expr, ExprId, GasFunction, Kind, QuantityId, RelationOrigin, Sheet};
 
 /// Equations that are left for elimination at the most: it costs their square.
 const MOST_COUPLED: usize = 2000;
@@ -118,7 +118,17 @@ impl Equations<'_> {
                     }
                 }
             }
-            Expr::Gas(..) | Expr::StandardPressure(_) => None,
+            Expr::Gas(function @ (GasFunction::SaturationPressure | GasFunction::SaturationTemperature), _, a) => {
+                let argument = self.walk(a);
+                let (takes, gives) = if function == GasFunction::SaturationPressure {
+                    (Dimension::TEMPERATURE, Dimension::PRESSURE)
+                } else {
+                    (Dimension::PRESSURE, Dimension::TEMPERATURE)
+                };
+                self.equal(argument.as_ref(), known(takes).as_ref());
+                known(gives)
+            }
+            Expr::Gas(..) | Expr::State(..) | Expr::StandardPressure(_) => None,
         }
     }
 }

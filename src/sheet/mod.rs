@@ -10,7 +10,9 @@ mod clause;
 mod constant;
 mod expr;
 mod expression;
+mod gas;
 mod inference;
+mod law;
 mod model;
 mod property;
 mod reader;
@@ -19,9 +21,9 @@ mod state;
 mod value;
 mod write;
 
-pub use expr::{Constant, Expr, ExprId, Exprs, GasFunction};
+pub use expr::{Constant, Expr, ExprId, Exprs, GasFunction, StateFunction};
 pub use model::{
-    Answer, Clause, Condition, Correlation, GasId, Kind, LiveValue, Origin, Property, PropertyRow, Quantity, QuantityId, Reading,
+    Answer, Clause, Condition, Correlation, GasId, GasModel, Kind, LiveValue, Origin, Property, PropertyRow, Quantity, QuantityId, Reading,
     ReferenceConditions, Relation, RelationOrigin, Sheet, SheetGas, ShownLiteral, ShownUnit, State, StateId, StatedUncertainty,
     TypedNumber,
 };

@@ -3,8 +3,9 @@
 use std::sync::Arc;
 
 use crate::diagnostic::Span;
-use crate::gas::Gas;
-use crate::syntax::{Basis, BinaryOp, Comparison, Function, Head, Model, Shape};
+use crate::gas::humid_air::HumidAir;
+use crate::gas::{Gas, RealGas};
+use crate::syntax::{Basis, BinaryOp, Comparison, Function, Head, Shape};
 use crate::units::{Dimension, Rational, Unit};
 
 use super::{Expr, ExprId, Exprs, GasFunction};
@@ -148,6 +149,9 @@ pub enum Property {
     Z,
     Mu,
     Lambda,
+    RelativeHumidity,
+    DewPoint,
+    HumidityRatio,
 }
 
 /// What there is to know of a property.
@@ -243,10 +247,51 @@ pub struct SheetGas {
     pub name: String,
     /// What it is.
     pub gas: Arc<Gas>,
-    /// `ideal` or `real`.
-    pub model: Model,
+    /// How its states are calculated.
+    pub model: GasModel,
+    /// The place of its name.
+    pub span: Span,
+    /// Where `, real` stands or may be written.
+    pub model_place: Span,
     /// Its statement.
     pub statement: usize,
+}
+
+impl SheetGas {
+    /// How many independent properties fix a state of it.
+    #[must_use]
+    pub fn degrees_of_freedom(&self) -> usize {
+        if matches!(self.model, GasModel::HumidAir(_)) { 3 } else { 2 }
+    }
+}
+
+/// How the states of a gas are calculated.
+#[derive(Clone, Debug)]
+pub enum GasModel {
+    /// By the ideal gas law and heat capacities that depend on temperature alone.
+    Ideal,
+    /// By an equation of state.
+    Real(RealGas),
+    /// Air with water vapour.
+    HumidAir(Arc<HumidAir>),
+}
+
+impl GasModel {
+    /// Its word in results.
+    #[must_use]
+    pub fn word(&self) -> &'static str {
+        match self {
+            Self::Ideal => "ideal",
+            Self::Real(_) => "real",
+            Self::HumidAir(_) => "humid air",
+        }
+    }
+
+    /// Whether the ideal gas law is assumed.
+    #[must_use]
+    pub fn is_ideal(&self) -> bool {
+        matches!(self, Self::Ideal)
+    }
 }
 
 /// A state point.
@@ -486,8 +531,10 @@ impl Sheet {
             Expr::Gas(function, ..) => Some(match function {
                 GasFunction::HeatCapacity | GasFunction::Entropy => Dimension::SPECIFIC_HEAT_CAPACITY,
                 GasFunction::Enthalpy | GasFunction::InternalEnergy => Dimension::SPECIFIC_ENERGY,
+                GasFunction::SaturationPressure => Dimension::PRESSURE,
                 _ => Dimension::TEMPERATURE,
             }),
+            Expr::State(function, ..) => Some(function.of.row().dimension),
             Expr::StandardPressure(_) => Some(Dimension::PRESSURE),
         }
     }

@@ -10,7 +10,7 @@ const fn row(property: Property, field: &'static str, word: &'static str, dimens
 
 impl Property {
     /// All properties, in the order in which they are listed.
-    pub const ROWS: [PropertyRow; 14] = [
+    pub const ROWS: [PropertyRow; 17] = [
         row(Self::P, "p", "pressure", Dimension::PRESSURE),
         row(Self::T, "T", "temperature", Dimension::TEMPERATURE),
         row(Self::V, "v", "specific volume", Dimension::SPECIFIC_VOLUME),
@@ -25,6 +25,9 @@ impl Property {
         row(Self::Z, "Z", "compressibility factor", Dimension::NONE),
         row(Self::Mu, "mu", "dynamic viscosity", Dimension::DYNAMIC_VISCOSITY),
         row(Self::Lambda, "lambda", "thermal conductivity", Dimension::THERMAL_CONDUCTIVITY),
+        row(Self::RelativeHumidity, "RH", "relative humidity", Dimension::NONE),
+        row(Self::DewPoint, "T_dew", "dew point", Dimension::TEMPERATURE),
+        row(Self::HumidityRatio, "W", "humidity ratio", Dimension::NONE),
     ];
 
     /// What there is to know of it.
@@ -38,6 +41,24 @@ impl Property {
     #[must_use]
     pub fn of_field(field: &str) -> Option<Self> {
         Self::ROWS.iter().find(|row| row.field == field).map(|row| row.property)
+    }
+
+    /// Whether two of its kind can fix the state of a real gas.
+    #[must_use]
+    pub fn fixes_a_state(self) -> bool {
+        matches!(self, Self::P | Self::T | Self::V | Self::Rho | Self::H | Self::U | Self::S)
+    }
+
+    /// Whether it says how moist humid air is, and no other gas offers it.
+    #[must_use]
+    pub fn is_moisture(self) -> bool {
+        matches!(self, Self::RelativeHumidity | Self::DewPoint | Self::HumidityRatio)
+    }
+
+    /// Whether it is a temperature or a pressure that counts from zero.
+    #[must_use]
+    pub fn is_absolute(self) -> bool {
+        matches!(self, Self::P | Self::T | Self::DewPoint)
     }
 
     /// Whether it depends on the heat capacity of the gas.

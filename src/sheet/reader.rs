@@ -25,7 +25,7 @@ pub(super) enum Meaning {
 }
 
 impl Meaning {
-    fn word(self) -> &'static str {
+    pub(super) fn word(self) -> &'static str {
         match self {
             Self::Quantity(_) => "quantity",
             Self::Gas(_) => "gas",

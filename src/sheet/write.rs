@@ -103,9 +103,20 @@ fn write(sheet: &Sheet, expr: ExprId, text: &mut String) {
                 GasFunction::TemperatureOfEnthalpy => "T_of_h",
                 GasFunction::TemperatureOfInternalEnergy => "T_of_u",
                 GasFunction::TemperatureOfEntropy => "T_of_s",
+                GasFunction::SaturationPressure => "p_sat",
+                GasFunction::SaturationTemperature => "T_sat",
             };
             text.push_str(&format!("{name}.{function}("));
             write(sheet, a, text);
+            text.push(')');
+        }
+        Expr::State(function, gas, arguments) => {
+            text.push_str(&format!("{}.{}(", sheet.gas(gas).name, function.of.row().field));
+            for (at, (property, argument)) in function.arguments().zip(arguments).enumerate() {
+                text.push_str(if at == 0 { "" } else { ", " });
+                text.push_str(&format!("{} = ", property.row().field));
+                write(sheet, argument, text);
+            }
             text.push(')');
         }
         Expr::StandardPressure(a) => {

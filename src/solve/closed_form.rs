@@ -3,7 +3,7 @@
 //! Where the quantity stands once, the operations around it are undone one by one; a function that has an inverse offers
 //! it. Where it stands several times but only to the first power, its terms are collected.
 
-use crate::sheet::{Expr, ExprId, Exprs, GasFunction, QuantityId};
+use crate::sheet::{Expr, ExprId, Exprs, GasFunction, Property, QuantityId, StateFunction};
 use crate::syntax::{BinaryOp, Function};
 
 /// A relation rearranged: the expressions that give the quantity, one for each branch.
@@ -101,14 +101,59 @@ fn invert(exprs: &mut Exprs, side: ExprId, other: ExprId, x: QuantityId, nonnega
                     GasFunction::TemperatureOfEnthalpy => GasFunction::Enthalpy,
                     GasFunction::TemperatureOfInternalEnergy => GasFunction::InternalEnergy,
                     GasFunction::TemperatureOfEntropy => GasFunction::Entropy,
+                    GasFunction::SaturationPressure => GasFunction::SaturationTemperature,
+                    GasFunction::SaturationTemperature => GasFunction::SaturationPressure,
                     GasFunction::HeatCapacity => return ClosedForm::None,
                 };
                 target = exprs.add(Expr::Gas(inverse, gas, target));
                 side = inner;
             }
+            Expr::State(function, gas, arguments) => {
+                let place = (0..3).find(|place| exprs.mentions(arguments[*place], x));
+                let Some((inverse, place)) = place.and_then(|place| Some((inverse_of(function, place)?, place))) else {
+                    return ClosedForm::None;
+                };
+                side = arguments[place];
+                let mut arguments = arguments;
+                arguments[place] = target;
+                if inverse.moisture.is_none() && place < 2 {
+                    arguments[2] = arguments[1];
+                }
+                target = exprs.add(Expr::State(inverse, gas, arguments));
+            }
             Expr::Call(_, _, Some(_)) | Expr::StandardPressure(_) | Expr::Number(..) | Expr::Constant(_) => return ClosedForm::None,
         }
     }
+}
+
+/// The function that finds the argument at `place` from the value of `function`: any two of the properties that can fix a
+/// state do, and of humid air each measure of its moisture follows from the others.
+fn inverse_of(function: StateFunction, place: usize) -> Option<StateFunction> {
+    let StateFunction { of, x, y, moisture } = function;
+    match (moisture, place) {
+        (Some(moisture), 2) => of.is_moisture().then_some(StateFunction { of: moisture, moisture: Some(of), ..function }),
+        (Some(_), _) => None,
+        (None, 1) if of.is_moisture() => Some(StateFunction { of: y, y: of, ..function }),
+        (None, 0) if of.is_moisture() => None,
+        (None, 0) => of.fixes_a_state().then_some(StateFunction { of: x, x: of, ..function }),
+        (None, _) => of.fixes_a_state().then_some(StateFunction { of: y, y: of, ..function }),
+    }
+}
+
+/// The temperature and the pressure of a state from two relations, each of which gives another property by both of them.
+pub(super) fn solve_for_state(exprs: &mut Exprs, relations: [(ExprId, ExprId); 2]) -> Option<[ExprId; 2]> {
+    let mut given = Vec::with_capacity(2);
+    for (left, right) in relations {
+        let Expr::State(function, gas, _) = exprs.get(right) else { return None };
+        let is_law = (function.x, function.y) == (Property::T, Property::P) && function.moisture.is_none();
+        if !is_law || !function.of.fixes_a_state() {
+            return None;
+        }
+        given.push((function.of, gas, left));
+    }
+    let [(x, gas, a), (y, other, b)] = given[..] else { return None };
+    (gas == other && x != y)
+        .then(|| [Property::T, Property::P].map(|of| exprs.add(Expr::State(StateFunction { of, x, y, moisture: None }, gas, [a, b, b]))))
 }
 
 /// `base^exponent = target`, x in the base.

@@ -36,7 +36,9 @@ pub(super) fn missing(sheet: &Sheet, part: &Part, quantities: &[QuantityId], rel
     let short: BTreeSet<StateId> = quantities
         .iter()
         .filter_map(|id| match sheet.quantity(*id).origin {
-            Origin::Property(state, _) if sheet.state(state).at.len() < 2 => Some(state),
+            Origin::Property(state, _) if sheet.state(state).at.len() < sheet.gas(sheet.state(state).gas).degrees_of_freedom() => {
+                Some(state)
+            }
             _ => None,
         })
         .collect();
@@ -53,10 +55,15 @@ pub(super) fn missing(sheet: &Sheet, part: &Part, quantities: &[QuantityId], rel
             [(property, _)] => format!("one property, {} ({})", property.row().field, property.row().word),
             more => format!("{} properties", more.len()),
         };
+        let needs = sheet.gas(entry.gas).degrees_of_freedom();
         let taken: Vec<Property> = entry.at.iter().map(|(property, _)| *property).collect();
         let thermal = [Property::T, Property::H, Property::U].iter().any(|property| taken.contains(property));
+        let is_moist = taken.iter().any(|property| property.is_moisture());
+        let moisture = [Property::RelativeHumidity, Property::DewPoint, Property::HumidityRatio];
+        let moisture = moisture.into_iter().filter(|_| needs == 3 && !is_moist);
         let offers: Vec<String> = [Property::P, Property::T, Property::V, Property::Rho, Property::H, Property::S]
             .into_iter()
+            .chain(moisture)
             .filter(|property| !(taken.contains(property) || thermal && matches!(property, Property::T | Property::H)))
             .map(|property| format!("`{}.{}` ({})", entry.name, property.row().field, property.row().word))
             .collect();
@@ -65,7 +72,8 @@ pub(super) fn missing(sheet: &Sheet, part: &Part, quantities: &[QuantityId], rel
         if !others.is_empty() {
             closes = format!("{closes}, or of {}", list(&others));
         }
-        let mut finding = code::under_determined::state(entry.span, &entry.name, &has, &closes);
+        let mut finding =
+            code::under_determined::state(entry.span, &entry.name, &has, (needs, needs.saturating_sub(entry.at.len()).max(1)), &closes);
         for relation in relations.iter().filter(|relation| sheet.relations[**relation].origin == RelationOrigin::Line).take(MOST_NAMES) {
             finding = finding.related(sheet.relations[*relation].span, "waits for it");
         }

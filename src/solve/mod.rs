@@ -13,11 +13,14 @@ mod physics;
 mod plan;
 mod program;
 mod recheck;
+mod refusal;
+mod reservation;
 mod run;
 mod scalar;
 mod slip;
 mod solution;
 mod solver;
+mod state_function;
 pub mod structure;
 mod tape;
 

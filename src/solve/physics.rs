@@ -1,6 +1,7 @@
 //! What a quantity can be before anything is known of it: where it is looked for, and how large it usually is.
 
-use crate::sheet::{Kind, Origin, Property, Quantity, Sheet};
+use crate::gas::humid_air::HUMID_T_K;
+use crate::sheet::{GasModel, Kind, Origin, Property, Quantity, Sheet};
 use crate::units::Dimension;
 
 /// Where a quantity is looked for when its line gives no bounds, as powers of ten about its usual size.
@@ -59,6 +60,14 @@ pub(super) fn widest(sheet: &Sheet, quantity: &Quantity) -> (f64, f64) {
     if quantity.dimension == Dimension::TEMPERATURE && quantity.kind != Kind::Difference {
         if let Origin::Property(state, Property::T) = quantity.origin {
             let state = sheet.state(state);
+            match &sheet.gas(state.gas).model {
+                GasModel::Real(real) => {
+                    let range = real.range();
+                    return (range.t_limit_low_k, range.t_limit_high_k);
+                }
+                GasModel::HumidAir(_) => return HUMID_T_K,
+                GasModel::Ideal => {}
+            }
             if state.properties.iter().any(|(property, _)| property.is_caloric()) {
                 let range = sheet.gas(state.gas).gas.caloric_range();
                 return (range.limit_low_k.max(1e-3), range.limit_high_k.min(HOTTEST_K));

@@ -4,11 +4,12 @@ use std::collections::BTreeMap;
 use std::ops::Range;
 use std::sync::Arc;
 
-use crate::sheet::{Condition, Constant, Expr, ExprId, QuantityId, RelationOrigin, Sheet};
+use crate::sheet::{Condition, Constant, Expr, ExprId, Origin, Property, QuantityId, RelationOrigin, Sheet};
 use crate::syntax::{BinaryOp, Function};
 
-use super::closed_form::{ClosedForm, solve_for};
+use super::closed_form::{ClosedForm, solve_for, solve_for_state};
 use super::physics;
+use super::state_function::Substance;
 use super::structure::Part;
 use super::tape::{Op, Slot, Tape};
 
@@ -116,9 +117,9 @@ struct Compiler<'a> {
 
 /// Compiles a sheet. `blocks` are in the order in which they can be solved; rows are relations, columns are quantities.
 pub(super) fn compile(sheet: &mut Sheet, blocks: &[Part], surplus: &[usize]) -> Plan {
-    let gases = sheet.gases.iter().map(|gas| Arc::clone(&gas.gas)).collect();
+    let substances = sheet.gases.iter().map(|gas| Arc::new(Substance::new(gas.clone()))).collect();
     let plan = Plan {
-        tape: Tape::new(gases),
+        tape: Tape::new(substances),
         segments: Vec::new(),
         blocks: Vec::new(),
         steps: Vec::new(),
@@ -205,6 +206,9 @@ impl Compiler<'_> {
             }
             return;
         }
+        if self.state_by_two(&relations, &quantities) {
+            return;
+        }
         match self.tear(&relations, &quantities) {
             Some((tear, order)) => {
                 let mut rest = relations.clone();
@@ -216,6 +220,24 @@ impl Compiler<'_> {
                 self.numeric(relations, quantities, &unknowns, &[], Vec::new());
             }
         }
+    }
+
+    /// A block that is the temperature and the pressure of one state, from two other properties of it.
+    fn state_by_two(&mut self, relations: &[usize], quantities: &[QuantityId]) -> bool {
+        let (&[first, second], &[a, b]) = (relations, quantities) else { return false };
+        let origin = |id: QuantityId| self.sheet.quantity(id).origin;
+        let (t, p) = match (origin(a), origin(b)) {
+            (Origin::Property(one, Property::T), Origin::Property(other, Property::P)) if one == other => (a, b),
+            (Origin::Property(one, Property::P), Origin::Property(other, Property::T)) if one == other => (b, a),
+            _ => return false,
+        };
+        let sides = [first, second].map(|at| (self.sheet.relations[at].left, self.sheet.relations[at].right));
+        let Some(forms) = solve_for_state(&mut self.sheet.exprs, sides) else { return false };
+        for (id, expression) in [t, p].into_iter().zip(forms) {
+            self.plan.slots[id.0 as usize] = self.expr(expression);
+            self.plan.steps.push(PlannedStep { quantities: vec![id], relations: relations.to_vec(), how: How::ClosedForm(expression) });
+        }
+        true
     }
 
     /// The relation rearranged for a quantity.
@@ -412,6 +434,11 @@ impl Compiler<'_> {
             Expr::Call(Function::Max, a, Some(b)) => Op::Greatest(self.expr(a), self.expr(b)),
             Expr::Call(function, a, _) => Op::Call(function, self.expr(a)),
             Expr::Gas(function, gas, a) => Op::Gas(function, gas.0, self.expr(a)),
+            Expr::State(function, gas, arguments) => {
+                let [a, b] = [self.expr(arguments[0]), self.expr(arguments[1])];
+                let c = if function.moisture.is_some() { self.expr(arguments[2]) } else { b };
+                return self.plan.tape.push_state(function, gas.0, [a, b, c]);
+            }
             Expr::StandardPressure(a) => Op::StandardPressure(self.expr(a)),
         };
         self.plan.tape.push(op)

@@ -6,7 +6,7 @@ use crate::sheet::{Expr, ExprId, QuantityId, Sheet};
 use crate::syntax::{BinaryOp, Function};
 use crate::units::math;
 
-use super::{physics, tape};
+use super::{physics, state_function, tape};
 
 /// A value, and the size of its terms: what it would be if nothing in it cancelled.
 #[derive(Clone, Copy, Debug)]
@@ -52,6 +52,10 @@ pub(super) fn walk(sheet: &Sheet, values: &[f64], expr: ExprId) -> Walked {
         }
         Expr::Call(function, a, _) => plain(tape::call(function, walk(sheet, values, a).value)),
         Expr::Gas(function, id, a) => plain(tape::gas_value(&sheet.gas(id).gas, function, walk(sheet, values, a).value)),
+        Expr::State(function, id, arguments) => {
+            let at = arguments.map(|argument| walk(sheet, values, argument).value);
+            plain(state_function::value(sheet.gas(id), function, at).unwrap_or(f64::NAN))
+        }
         Expr::StandardPressure(a) => plain(gas::standard_pressure_pa(walk(sheet, values, a).value)),
     }
 }

@@ -1,5 +1,6 @@
 //! The solution: every value, every verdict and every check, as plain data.
 
+use crate::gas::verdict::IdealError;
 use crate::sheet::{ExprId, QuantityId, StateId};
 
 /// How a group of quantities was found.
@@ -90,6 +91,8 @@ pub struct StateVerdict {
     pub verdict: Verdict,
     /// Error of the ideal law in density in percent, where a reference equation tells it.
     pub ideal_error_percent: Option<f64>,
+    /// The errors of the ideal law in all that is calculated by it, where a reference equation tells them.
+    pub errors: Option<IdealError>,
     /// p below a third of the critical pressure and T at least twice the critical temperature; `None` where unknown.
     pub rule_a: Option<bool>,
     /// p below a hundredth of the critical pressure.
@@ -128,7 +131,7 @@ pub struct Solution {
     pub assumptions: Vec<Option<Judged>>,
     /// Cautions, as in the sheet: whether each is shown.
     pub cautions: Vec<bool>,
-    /// States, as in the sheet.
+    /// The verdicts on the states of ideal gases, in the order of the sheet.
     pub states: Vec<StateVerdict>,
     /// Relations that were not needed and agree.
     pub surplus: Vec<SurplusCheck>,

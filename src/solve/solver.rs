@@ -3,13 +3,13 @@
 use std::collections::BTreeSet;
 
 use crate::diagnostic::{Diagnostic, code};
-use crate::sheet::{Expr, ExprId, GasFunction, Origin, QuantityId, RelationOrigin, Sheet, StateId};
-use crate::units::{self, Dimension};
+use crate::sheet::{Expr, ExprId, GasFunction, Origin, QuantityId, RelationOrigin, Sheet};
+use crate::units;
 
 use super::plan::{self, How, NO_SLOT, Plan};
 use super::run::{self, Evaluation};
 use super::structure::{Part, Pattern, Structure, structure};
-use super::{Method, Solution, Step, SurplusCheck, explain, judge, recheck, slip};
+use super::{Method, Solution, Step, SurplusCheck, explain, judge, recheck, refusal, reservation, slip};
 
 /// A scaled residual of the re-check above this is no solution.
 const LARGEST_RESIDUAL: f64 = 1e-8;
@@ -138,7 +138,8 @@ pub fn solve(sheet: &mut Sheet) -> (Option<Solution>, Vec<Diagnostic>) {
     let values: Vec<f64> =
         plan.slots.iter().map(|slot| if *slot == NO_SLOT { f64::NAN } else { evaluation.values[*slot as usize] }).collect();
     let site_pa = sheet.site_pressure.map_or(0.0, |id| values[id.0 as usize]);
-    faults(sheet, &plan, &evaluation, &values, site_pa, &mut findings);
+    let refused = faults(sheet, &plan, &evaluation, &values, site_pa, &mut findings);
+    findings.extend(refusal::phases(sheet, &values, &refused));
     let widths = Widths::of(sheet, &plan, &evaluation);
     let surplus = surplus_checks(sheet, &analysed, &plan, &evaluation, &widths, &mut findings);
     if findings.iter().any(Diagnostic::is_error) {
@@ -148,8 +149,10 @@ pub fn solve(sheet: &mut Sheet) -> (Option<Solution>, Vec<Diagnostic>) {
     if findings.iter().any(Diagnostic::is_error) { (None, findings) } else { (Some(solution), findings) }
 }
 
-/// Tells of everything that has no value or an impossible one. What follows from another one stays silent.
-fn faults(sheet: &Sheet, plan: &Plan, evaluation: &Evaluation, values: &[f64], site_pa: f64, findings: &mut Vec<Diagnostic>) {
+/// Tells of everything that has no value or an impossible one. What follows from another one stays silent. Of every state,
+/// whether its gas refuses it.
+fn faults(sheet: &Sheet, plan: &Plan, evaluation: &Evaluation, values: &[f64], site_pa: f64, findings: &mut Vec<Diagnostic>) -> Vec<bool> {
+    let mut refused = vec![false; sheet.states.len()];
     let mut told = vec![false; sheet.quantities.len()];
     for (id, _) in &plan.inputs {
         // A reading in gauge below full vacuum is told where it stands; here only results are.
@@ -176,7 +179,18 @@ fn faults(sheet: &Sheet, plan: &Plan, evaluation: &Evaluation, values: &[f64], s
                 How::ClosedForm(expression) => {
                     let id = step.quantities[0];
                     let span = sheet.relations[step.relations[0]].span;
-                    if let Some(finding) = out_of_model(sheet, id, values)
+                    let owner = match sheet.relations[step.relations[0]].origin {
+                        RelationOrigin::Law(state, _) | RelationOrigin::At(state, _) => Some(state),
+                        _ => None,
+                    };
+                    if owner.is_some_and(|state| refused[state.0 as usize]) && !values[id.0 as usize].is_finite() {
+                        bad = true;
+                    } else if let Some(finding) = refusal::of_expression(sheet, owner, *expression, span, values) {
+                        findings.push(finding);
+                        if let Some(state) = owner {
+                            refused[state.0 as usize] = true;
+                        }
+                    } else if let Some(finding) = out_of_model(sheet, id, values)
                         .or_else(|| temperature_out_of_model(sheet, id, *expression, values))
                         .or_else(|| explain::undefined(sheet, values, *expression, span, site_pa))
                     {
@@ -224,6 +238,7 @@ fn faults(sheet: &Sheet, plan: &Plan, evaluation: &Evaluation, values: &[f64], s
             told[id.0 as usize] = follows || bad || !values[id.0 as usize].is_finite();
         }
     }
+    refused
 }
 
 /// A property that needs the heat capacity of a gas outside the range in which it is known.
@@ -235,6 +250,9 @@ fn out_of_model(sheet: &Sheet, id: QuantityId, values: &[f64]) -> Option<Diagnos
     let entry = sheet.state(state);
     let (_, t) = entry.properties.iter().find(|(property, _)| *property == crate::sheet::Property::T)?;
     let t_k = values[t.0 as usize];
+    if !sheet.gas(entry.gas).model.is_ideal() {
+        return None;
+    }
     let gas = &sheet.gas(entry.gas).gas;
     let range = gas.caloric_range();
     let kelvin = |t_k: f64| format!("{} K", units::write_figures(t_k, 4));
@@ -437,8 +455,9 @@ fn conclude(
         .iter()
         .map(|clause| judge::judge(sheet, &values, clause, &mut half_widths, site_pa).is_none_or(|judged| judged.holds))
         .collect();
-    let states: Vec<_> = (0..sheet.states.len()).map(|at| judge::state(sheet, &values, StateId(at as u32))).collect();
-    extrapolated(sheet, &values, findings);
+    let states = judge::states(sheet, &values);
+    findings.extend(judge::failures(sheet, &states));
+    reservation::reservations(sheet, &values, findings);
     slip::slips(sheet, &values, &plan.steps, &requirements, site_pa, findings);
     let steps: Vec<Step> = plan
         .steps
@@ -473,30 +492,5 @@ fn conclude(
         largest_residual: worst.map_or(0.0, |(_, residual)| residual),
         worst_relation: worst.map(|(at, _)| at),
         site_pressure_pa: site_pa,
-    }
-}
-
-/// Warns of states between the published range of their heat capacity and the limit to which it is taken.
-fn extrapolated(sheet: &Sheet, values: &[f64], findings: &mut Vec<Diagnostic>) {
-    for state in &sheet.states {
-        if !state.properties.iter().any(|(property, _)| property.is_caloric()) {
-            continue;
-        }
-        let Some((_, t)) = state.properties.iter().find(|(_, id)| sheet.quantity(*id).dimension == Dimension::TEMPERATURE) else {
-            continue;
-        };
-        let t_k = values[t.0 as usize];
-        let range = sheet.gas(state.gas).gas.caloric_range();
-        if t_k.is_finite() && !range.is_published(t_k) {
-            let kelvin = |t_k: f64| format!("{} K", units::write_figures(t_k, 4));
-            let published = format!("{} to {}", kelvin(range.low_k), kelvin(range.high_k));
-            findings.push(code::outside_model_range::extrapolated(
-                state.span,
-                &state.name,
-                &kelvin(t_k),
-                &published,
-                &crate::gas::catalogue::caloric_source(&sheet.gas(state.gas).gas),
-            ));
-        }
     }
 }

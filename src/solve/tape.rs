@@ -3,10 +3,13 @@
 use std::ops::Range;
 use std::sync::Arc;
 
-use crate::gas::{self, Gas};
-use crate::sheet::GasFunction;
+use crate::gas::eos::Equation;
+use crate::gas::{self, Gas, StateError, saturation};
+use crate::sheet::{GasFunction, StateFunction};
 use crate::syntax::Function;
 use crate::units::math;
+
+use super::state_function::Substance;
 
 /// The place of an operation on the tape, and of its value.
 pub(super) type Slot = u32;
@@ -44,15 +47,31 @@ pub(super) enum Op {
     Greatest(Slot, Slot),
     /// A function of a gas.
     Gas(GasFunction, u32, Slot),
+    /// A property of a state, by its place among [`Tape::states`].
+    State(u32),
     /// Pressure of the standard atmosphere.
     StandardPressure(Slot),
 }
 
+/// A property of a state with what it reads.
+#[derive(Clone, Copy, Debug)]
+struct StateOp {
+    function: StateFunction,
+    gas: u32,
+    arguments: [Slot; 3],
+}
+
+impl StateOp {
+    fn at(&self, values: &[f64]) -> [f64; 3] {
+        self.arguments.map(|slot| values[slot as usize])
+    }
+}
+
 impl Op {
-    /// The slots that it reads.
+    /// The slots that it reads, but for those of a state.
     fn operands(self) -> [Option<Slot>; 2] {
         match self {
-            Self::Input(_) | Self::Constant(_) | Self::Unknown => [None, None],
+            Self::Input(_) | Self::Constant(_) | Self::Unknown | Self::State(_) => [None, None],
             Self::Negate(a)
             | Self::Integer(a, _)
             | Self::Half(a, _)
@@ -70,6 +89,9 @@ impl Op {
     }
 }
 
+/// An operand that is not there.
+const NOTHING: (Slot, f64) = (0, 0.0);
+
 /// The largest whole or half power that is computed by products.
 const LARGEST_POWER: f64 = 64.0;
 
@@ -82,14 +104,25 @@ fn scaled(derivative: f64, tangent: f64) -> f64 {
 #[derive(Clone, Debug, Default)]
 pub(super) struct Tape {
     ops: Vec<Op>,
-    gases: Vec<Arc<Gas>>,
+    states: Vec<StateOp>,
+    substances: Vec<Arc<Substance>>,
 }
 
 impl Tape {
     /// An empty tape over the gases of a sheet.
     #[must_use]
-    pub(super) fn new(gases: Vec<Arc<Gas>>) -> Self {
-        Self { ops: Vec::new(), gases }
+    pub(super) fn new(substances: Vec<Arc<Substance>>) -> Self {
+        Self { ops: Vec::new(), states: Vec::new(), substances }
+    }
+
+    fn gas(&self, gas: u32) -> &Gas {
+        &self.substances[gas as usize].gas.gas
+    }
+
+    /// Adds a property of a state.
+    pub(super) fn push_state(&mut self, function: StateFunction, gas: u32, arguments: [Slot; 3]) -> Slot {
+        self.states.push(StateOp { function, gas, arguments });
+        self.push(Op::State(self.states.len() as u32 - 1))
     }
 
     /// How many operations there are.
@@ -119,7 +152,9 @@ impl Tape {
     pub(super) fn reads_before(&self, range: Range<usize>) -> Vec<Slot> {
         let mut found = Vec::new();
         for op in &self.ops[range.clone()] {
-            found.extend(op.operands().into_iter().flatten().filter(|slot| (*slot as usize) < range.start));
+            let of_state: &[Slot] = if let Op::State(at) = op { &self.states[*at as usize].arguments } else { &[] };
+            let slots = op.operands().into_iter().flatten().chain(of_state.iter().copied());
+            found.extend(slots.filter(|slot| (*slot as usize) < range.start));
         }
         found.sort_unstable();
         found.dedup();
@@ -145,20 +180,35 @@ impl Tape {
                 Op::Call(function, a) => call(function, value(a)),
                 Op::Least(a, b) => least(value(a), value(b)),
                 Op::Greatest(a, b) => -least(-value(a), -value(b)),
-                Op::Gas(function, gas, a) => gas_value(&self.gases[gas as usize], function, value(a)),
+                Op::Gas(function, gas, a) => gas_value(self.gas(gas), function, value(a)),
+                Op::State(at) => {
+                    let state = &self.states[at as usize];
+                    self.substances[state.gas as usize].value(state.function, state.at(values))
+                }
                 Op::StandardPressure(a) => gas::standard_pressure_pa(value(a)),
             };
         }
     }
 
     /// The partial derivatives of an operation by its operands, at `values`.
-    fn partials(&self, at: usize, values: &[f64]) -> [(Slot, f64); 2] {
-        /// An operand that is not there.
-        const NOTHING: (Slot, f64) = (0, 0.0);
+    fn partials(&self, at: usize, values: &[f64]) -> [(Slot, f64); 3] {
+        let [a, b] = match self.ops[at] {
+            Op::State(state) => {
+                let state = &self.states[state as usize];
+                let (_, slopes) = self.substances[state.gas as usize].sloped(state.function, state.at(values));
+                let [a, b, c] = state.arguments;
+                return [(a, slopes[0]), (b, slopes[1]), (c, slopes[2])];
+            }
+            op => self.partials_of_two(op, at, values),
+        };
+        [a, b, NOTHING]
+    }
+
+    fn partials_of_two(&self, op: Op, at: usize, values: &[f64]) -> [(Slot, f64); 2] {
         let value = |slot: Slot| values[slot as usize];
         let one = |slot: Slot, derivative: f64| [(slot, derivative), NOTHING];
-        match self.ops[at] {
-            Op::Input(_) | Op::Constant(_) | Op::Unknown => [NOTHING, NOTHING],
+        match op {
+            Op::Input(_) | Op::Constant(_) | Op::Unknown | Op::State(_) => [NOTHING, NOTHING],
             Op::Negate(a) => one(a, -1.0),
             Op::Add(a, b) => [(a, 1.0), (b, 1.0)],
             Op::Subtract(a, b) => [(a, 1.0), (b, -1.0)],
@@ -174,7 +224,7 @@ impl Tape {
             Op::Call(function, a) => one(a, call_slope(function, value(a), values[at])),
             Op::Least(a, b) => [(a, f64::from(value(a) <= value(b))), (b, f64::from(value(a) > value(b)))],
             Op::Greatest(a, b) => [(a, f64::from(value(a) >= value(b))), (b, f64::from(value(a) < value(b)))],
-            Op::Gas(function, gas, a) => one(a, gas_slope(&self.gases[gas as usize], function, value(a), values[at])),
+            Op::Gas(function, gas, a) => one(a, gas_slope(self.gas(gas), function, value(a), values[at])),
             Op::StandardPressure(a) => one(a, gas::d_standard_pressure_pa_per_m(value(a))),
         }
     }
@@ -185,8 +235,8 @@ impl Tape {
             if matches!(self.ops[at], Op::Input(_) | Op::Unknown) {
                 continue;
             }
-            let [(a, by_a), (b, by_b)] = self.partials(at, values);
-            tangents[at] = scaled(by_a, tangents[a as usize]) + scaled(by_b, tangents[b as usize]);
+            let [(a, by_a), (b, by_b), (c, by_c)] = self.partials(at, values);
+            tangents[at] = scaled(by_a, tangents[a as usize]) + scaled(by_b, tangents[b as usize]) + scaled(by_c, tangents[c as usize]);
         }
     }
 
@@ -197,10 +247,12 @@ impl Tape {
             if adjoint == 0.0 || matches!(self.ops[at], Op::Input(_) | Op::Unknown | Op::Constant(_)) {
                 continue;
             }
-            let [(a, by_a), (b, by_b)] = self.partials(at, values);
+            let [(a, by_a), (b, by_b), (c, by_c)] = self.partials(at, values);
             adjoints[a as usize] += scaled(by_a, adjoint);
-            if by_b != 0.0 {
-                adjoints[b as usize] += scaled(by_b, adjoint);
+            for (slot, by) in [(b, by_b), (c, by_c)] {
+                if by != 0.0 {
+                    adjoints[slot as usize] += scaled(by, adjoint);
+                }
             }
         }
     }
@@ -294,6 +346,9 @@ pub(super) fn gas_value(gas: &Gas, function: GasFunction, a: f64) -> f64 {
         GasFunction::TemperatureOfEnthalpy => gas.t_k_from_h(a),
         GasFunction::TemperatureOfInternalEnergy => gas.t_k_from_u(a),
         GasFunction::TemperatureOfEntropy => gas.t_k_from_s(a),
+        GasFunction::SaturationPressure | GasFunction::SaturationTemperature => {
+            saturation_line(gas, function, a).map_or(f64::NAN, |(value, _)| value)
+        }
     }
 }
 
@@ -307,5 +362,16 @@ fn gas_slope(gas: &Gas, function: GasFunction, a: f64, value: f64) -> f64 {
         GasFunction::TemperatureOfEnthalpy => 1.0 / gas.cp_j_kg_k(value),
         GasFunction::TemperatureOfInternalEnergy => 1.0 / (gas.cp_j_kg_k(value) - r),
         GasFunction::TemperatureOfEntropy => value / gas.cp_j_kg_k(value),
+        GasFunction::SaturationPressure | GasFunction::SaturationTemperature => {
+            saturation_line(gas, function, a).map_or(f64::NAN, |(_, slope)| slope)
+        }
     }
+}
+
+/// A value of the saturation line of a gas with its derivative, or why there is none.
+pub(super) fn saturation_line(gas: &Gas, function: GasFunction, a: f64) -> Result<(f64, f64), StateError> {
+    let equation = gas.species().and_then(Equation::of);
+    let equation = equation.ok_or(StateError::NoState { quantity: "saturation line", value: a })?;
+    let of = if function == GasFunction::SaturationPressure { saturation::p_sat } else { saturation::t_sat };
+    of(equation, a).map(|point| (point.value, point.slope))
 }

@@ -68,6 +68,13 @@ pub(crate) fn argument(span: Span, function: &str, dimension: &str) -> Diagnosti
         .help(format!("divide it by a quantity of its kind: `{function}(x / x_0)`"))
 }
 
+/// An argument of a function that takes something else.
+pub(crate) fn argument_of(span: Span, function: &str, found: &str, wanted: &str) -> Diagnostic {
+    Diagnostic::error(CODE, span, format!("`{function}` takes {}, this is {}", a(wanted), a(found)))
+        .label(a(found))
+        .help(format!("give {} to `{function}`", a(wanted)))
+}
+
 /// An exponent with a dimension.
 pub(crate) fn exponent(span: Span, dimension: &str) -> Diagnostic {
     Diagnostic::error(CODE, span, format!("an exponent is a pure number, this is {}", a(dimension)))

@@ -61,3 +61,10 @@ pub(crate) fn shown(span: Span, found: &str, shown: &str, unit: Span) -> Diagnos
         .related(unit, format!("shown as {shown}"))
         .help("a difference is shown with `diff` (or in `K`), an absolute value without")
 }
+
+/// A difference where a function takes an absolute value.
+pub(crate) fn argument(span: Span, function: &str, what: &str) -> Diagnostic {
+    Diagnostic::error(CODE, span, format!("`{function}` takes an absolute {what}, this is a difference"))
+        .label("a difference")
+        .help(format!("add it to an absolute {what} first"))
+}

@@ -47,6 +47,40 @@ pub(crate) fn extrapolated(span: Span, state: &str, value: &str, range: &str, so
         .help("take the result with care, or check the temperature")
 }
 
+/// Beyond the limits to which an equation of state goes on. `words` are the value, the published range, and how far it goes on (empty
+/// where no further).
+pub(crate) fn equation(span: Span, state: &str, gas: &str, [value, published, goes_on]: &[String; 3], source: &str) -> Diagnostic {
+    let subject = if state.is_empty() { gas.to_owned() } else { format!("the state `{state}`") };
+    let mut finding = Diagnostic::error(CODE, span, format!("{subject} has {value}, beyond the range of the model of {gas}"))
+        .label("outside the range of the model")
+        .fact(format!("published {published}"));
+    if !goes_on.is_empty() {
+        finding = finding.fact(format!("extrapolated {goes_on}, with a warning"));
+    }
+    if !source.is_empty() {
+        finding = finding.fact(source.to_owned());
+    }
+    finding.help("check temperature and pressure; no value is offered beyond these limits")
+}
+
+/// Between the published range of an equation of state and the limit to which it goes on.
+pub(crate) fn unpublished(span: Span, state: &str, gas: &str, value: &str, published: &str, source: &str) -> Diagnostic {
+    Diagnostic::warning(CODE, span, format!("the state `{state}` has {value}, outside the published range of the model of {gas}"))
+        .label("extrapolated")
+        .fact(format!("published {published}"))
+        .fact(source.to_owned())
+        .help("take the result with care, or check the state")
+}
+
+/// A transport property outside the published range of its correlation.
+pub(crate) fn correlation(span: Span, state: &str, word: &str, value: &str, published: &str, source: &str) -> Diagnostic {
+    Diagnostic::warning(CODE, span, format!("the {word} of the state `{state}` is taken at {value}, outside its published range"))
+        .label("extrapolated")
+        .fact(format!("published {published}"))
+        .fact(source.to_owned())
+        .help("take the result with care, or check the state")
+}
+
 /// A gas for which the tool has no heat capacity at all.
 pub(crate) fn no_data(span: Span, gas: &str) -> Diagnostic {
     Diagnostic::error(CODE, span, format!("no heat capacity of `{gas}` is known here"))

@@ -42,10 +42,19 @@ pub(crate) fn part(span: Span, first: &str, missing: usize, names: &str) -> Diag
 
 /// A state that has fewer than two properties. `has` says how many: "no property", "one property, p (pressure)"; `names` would
 /// close it.
-pub(crate) fn state(span: Span, state: &str, has: &str, names: &str) -> Diagnostic {
-    let none = has.starts_with("no ");
-    Diagnostic::error(CODE, span, format!("the state `{state}` has {has}, and a state of a gas needs two"))
-        .label(if none { "two independent properties are missing" } else { "a second independent property is missing" })
-        .fact("a single-phase gas has two degrees of freedom")
-        .help(format!("give {} of {names}", if none { "two" } else { "one" }))
+pub(crate) fn state(span: Span, state: &str, has: &str, (needs, lacks): (usize, usize), names: &str) -> Diagnostic {
+    let number = |n: usize| ["no", "one", "two", "three"].get(n).copied().unwrap_or("more");
+    let (whose, fact) = match needs {
+        3 => ("humid air", "humid air has three degrees of freedom: two as any gas, and its moisture"),
+        _ => ("a gas", "a single-phase gas has two degrees of freedom"),
+    };
+    let label = match (needs, lacks) {
+        (2, 1) => "a second independent property is missing".to_owned(),
+        (_, 1) => "one more independent property is missing".to_owned(),
+        (_, n) => format!("{} independent properties are missing", number(n)),
+    };
+    Diagnostic::error(CODE, span, format!("the state `{state}` has {has}, and a state of {whose} needs {}", number(needs)))
+        .label(label)
+        .fact(fact)
+        .help(format!("give {} of {names}", number(lacks)))
 }

@@ -11,8 +11,8 @@ pub(crate) const CODE: &str = "unknown-field";
 pub(crate) const PAGE: &str = r##"
 # A property that is not there
 
-Behind the dot stands a property of a state, a gas or the site. A state has `p T v rho h u s cp cv k w Z`, a gas
-`M R T_c p_c`, the site `p`. Capital and small letters differ: `v` is the specific volume, `w` the speed of sound, `T` the
+Behind the dot stands a property of a state, a gas or the site. A state has `p T v rho h u s cp cv k w Z mu
+lambda` (and of humid air `RH T_dew W`), a gas `M R T_c p_c` and the functions `p_sat(T)` and `T_sat(p)`, the site `p`. Capital and small letters differ: `v` is the specific volume, `w` the speed of sound, `T` the
 temperature, and there is no `t`. The words are short because they are the symbols of the trade. A quantity has no properties
 at all: its name stands for its value.
 
@@ -38,6 +38,13 @@ pub(crate) fn finding(span: Span, owner: &str, what: &str, field: &str, near: &[
     let whose = if owner == what { format!("the {what}") } else { format!("the {what} `{owner}`") };
     let finding = Diagnostic::error(CODE, span, format!("{whose} has no `{field}`")).label(format!("no property of a {what}"));
     suggest(finding, span, near, &format!("a {what} offers {fields}"))
+}
+
+/// A function behind something that is no gas.
+pub(crate) fn no_function(span: Span, owner: &str, what: &str) -> Diagnostic {
+    Diagnostic::error(CODE, span, format!("`{owner}` is a {what} and offers no function"))
+        .label("only gases offer functions")
+        .help("write the name of a gas before the dot: `gas.p_sat(T)`, `gas.T_sat(p)`")
 }
 
 /// A field behind a quantity, which has none.

@@ -48,9 +48,9 @@ fn write(formula: &Formula, out: &mut String) {
             write_function_word(word, out);
             write_arguments(arguments, out);
         }
-        Formula::Application(symbol, argument) => {
+        Formula::Application(symbol, arguments) => {
             write_symbol(symbol, out);
-            write_arguments(std::slice::from_ref(argument), out);
+            write_arguments(arguments, out);
         }
         Formula::Magnitude(inner) => {
             out.push_str("\\left\\lvert ");

@@ -51,9 +51,9 @@ fn write(formula: &Formula, out: &mut String) {
             write_function_word(word, out);
             write_arguments(arguments, out);
         }),
-        Formula::Application(symbol, argument) => row(out, |out| {
+        Formula::Application(symbol, arguments) => row(out, |out| {
             write_symbol(symbol, out);
-            write_arguments(std::slice::from_ref(argument), out);
+            write_arguments(arguments, out);
         }),
         Formula::Magnitude(inner) => row(out, |out| {
             out.push_str(r#"<mo fence="true" stretchy="true" form="prefix">|</mo>"#);

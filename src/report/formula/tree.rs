@@ -1,6 +1,6 @@
 //! The formula: one tree from which MathML and LaTeX are written.
 
-use crate::sheet::{Condition, Constant, Expr, ExprId, GasFunction, QuantityId, Relation};
+use crate::sheet::{Condition, Constant, Expr, ExprId, GasFunction, Property, QuantityId, Relation};
 use crate::syntax::{BinaryOp, Comparison, Function};
 use crate::units::constants::STANDARD_STATE_PRESSURE;
 use crate::units::{Rational, write_figures};
@@ -29,7 +29,7 @@ pub(in crate::report) enum Formula {
     /// A function of the language, by its word.
     Function(&'static str, Vec<Formula>),
     /// A function that has a symbol: the enthalpy of a gas at a temperature.
-    Application(Symbol, Box<Formula>),
+    Application(Symbol, Vec<Formula>),
     /// The size without sign.
     Magnitude(Box<Formula>),
     /// Formulas with a sign between each two: `=`, `≈`, `≥`.
@@ -111,12 +111,24 @@ impl Draft<'_> {
                 }
             }
             Expr::Gas(function, gas, a) => {
-                Formula::Application(gas_function(function, &self.input.sheet.gas(gas).name), Box::new(self.formula(a, put)))
+                Formula::Application(gas_function(function, &self.input.sheet.gas(gas).name), vec![self.formula(a, put)])
+            }
+            Expr::State(function, gas, arguments) => {
+                let name = match function.of {
+                    Property::Cp => "c_p",
+                    Property::Cv => "c_v",
+                    other => other.row().field,
+                };
+                let mut symbol = Symbol::of_name(name);
+                let gas = &self.input.sheet.gas(gas).name;
+                symbol.subscripts.push(Subscript { text: gas.replace('_', " "), italic: false });
+                let arguments = function.arguments().zip(arguments).map(|(_, argument)| self.formula(argument, put)).collect();
+                Formula::Application(symbol, arguments)
             }
             Expr::StandardPressure(a) => {
                 let below = Subscript { text: "ISO 2533".to_owned(), italic: false };
                 let symbol = Symbol { delta: false, base: "p".to_owned(), subscripts: vec![below] };
-                Formula::Application(symbol, Box::new(self.formula(a, put)))
+                Formula::Application(symbol, vec![self.formula(a, put)])
             }
         }
     }
@@ -252,6 +264,8 @@ fn gas_function(function: GasFunction, gas: &str) -> Symbol {
         GasFunction::Enthalpy => ("h", None),
         GasFunction::Entropy => ("s", None),
         GasFunction::InternalEnergy => ("u", None),
+        GasFunction::SaturationPressure => ("p", Some("sat")),
+        GasFunction::SaturationTemperature => ("T", Some("sat")),
     };
     let own = italic.map(|text| Subscript { text: text.to_owned(), italic: true });
     let gas = Subscript { text: gas.replace('_', " "), italic: false };
@@ -332,9 +346,11 @@ impl Formula {
         match self {
             Self::Symbol(_) | Self::Value(_) => false,
             Self::Fraction(..) | Self::Root(..) | Self::Power(..) => true,
-            Self::Magnitude(inner) | Self::Application(_, inner) => inner.is_tall(),
+            Self::Magnitude(inner) => inner.is_tall(),
             Self::Sum(terms) => terms.iter().any(|(_, term)| term.is_tall()),
-            Self::Product(parts) | Self::Function(_, parts) | Self::Words(_, parts) => parts.iter().any(Self::is_tall),
+            Self::Product(parts) | Self::Function(_, parts) | Self::Application(_, parts) | Self::Words(_, parts) => {
+                parts.iter().any(Self::is_tall)
+            }
             Self::Chain(first, more) => first.is_tall() || more.iter().any(|(_, part)| part.is_tall()),
             Self::Opening(left, _) => left.as_ref().is_some_and(|left| left.is_tall()),
         }
@@ -352,7 +368,7 @@ impl Formula {
             Self::Power(base, exponent) => base.width() + bracket_width(base, Hold::Atom) + 0.7 * exponent.width(),
             Self::Root(inner, _) | Self::Magnitude(inner) => inner.width() + 1.0,
             Self::Function(word, arguments) => 0.5 * word.len() as f64 + 1.0 + all(arguments, 0.6),
-            Self::Application(symbol, argument) => symbol_width(symbol) + 1.0 + argument.width(),
+            Self::Application(symbol, arguments) => symbol_width(symbol) + 1.0 + all(arguments, 0.6),
             Self::Chain(first, more) => first.width() + more.iter().map(|(_, part)| part.width() + 1.4).sum::<f64>(),
             Self::Words(_, parts) => all(parts, 2.5),
             Self::Opening(left, _) => left.as_ref().map_or(0.0, |left| left.width()) + 1.2,

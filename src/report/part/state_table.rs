@@ -7,7 +7,6 @@ use crate::gas::polynomial::POLYNOMIAL_SOURCE;
 use crate::report::draft::{Draft, markdown};
 use crate::report::formula::{Formula, Symbol};
 use crate::report::markdown::escape;
-use crate::report::result::model_word;
 use crate::report::typeset::{typeset_number, typeset_unit};
 use crate::report::written::{Written, scaled, without_end_zeros};
 use crate::sheet::{GasId, Property, ShownUnit, StateId};
@@ -104,7 +103,7 @@ fn bare_name(property: Property) -> &'static str {
 fn model(draft: &Draft, gas: GasId, properties: &[(Property, ShownUnit)]) -> String {
     let sheet_gas = draft.input.sheet.gas(gas);
     let gas = &sheet_gas.gas;
-    let mut text = format!("Model of {}: {} gas.", escape(&gas.title()), model_word(sheet_gas.model));
+    let mut text = format!("Model of {}: {} gas.", escape(&gas.title()), sheet_gas.model.word());
     if properties.iter().any(|(property, _)| property.is_caloric()) && gas.has_caloric().is_ok() {
         let range = gas.caloric_range();
         let k = |t_k: f64| escape(&Written { number: without_end_zeros(&write_figures(t_k, 6)), unit: "K".to_owned() }.typeset());
