@@ -3,7 +3,7 @@
 use crate::diagnostic::{Diagnostic, Span, code};
 use crate::gas::phase::PhaseGuard;
 use crate::gas::{Limit, ModelRange, StateError};
-use crate::sheet::{Expr, ExprId, GasId, GasModel, Property, Sheet, State, StateId};
+use crate::sheet::{Expr, ExprId, GasFunction, GasId, GasModel, Property, Sheet, State, StateId};
 use crate::units::{self, constants::ZERO_CELSIUS};
 
 use super::{recheck, state_function, tape};
@@ -62,7 +62,7 @@ pub(super) fn of_expression(
                 None => told(sheet, gas, &Place { span: fallback, state: "", gas: gas_title(sheet, gas) }, &error, excess),
             })
         }
-        Expr::Gas(function, gas, a) => {
+        Expr::Gas(function @ (GasFunction::SaturationPressure | GasFunction::SaturationTemperature), gas, a) => {
             let a = value(a);
             let error = a.is_finite().then(|| tape::saturation_line(&sheet.gas(gas).gas, function, a).err()).flatten()?;
             let place =
