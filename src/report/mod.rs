@@ -23,6 +23,7 @@ mod draft;
 mod formula;
 mod input;
 mod markdown;
+mod model;
 mod object;
 mod page;
 mod part;
@@ -36,7 +37,7 @@ mod written;
 
 pub use input::Input;
 pub use object::{
-    AnswerObject, AssumptionObject, CautionObject, ChecksObject, ContributionObject, CorrelationObject, MonteCarloObject, QuantityObject,
+    AnswerObject, AssumptionObject, CautionObject, ChecksObject, ContributionObject, CorrelationObject, IdealErrorsObject, MonteCarloObject, QuantityObject,
     RequirementObject, ResultObject, RulesObject, SCHEMA, SheetObject, StateObject, StepObject, SurplusObject, ToolObject,
     UncertaintyObject,
 };
