@@ -1,7 +1,7 @@
 //! By what a state was calculated: kind of the model, its publication, and whether it goes beyond what is published.
 
 use crate::gas::humid_air::{CIPM_P_PA, CIPM_SOURCE, CIPM_T_K, VIRIAL_SOURCE};
-use crate::gas::{catalogue, verdict::Judge};
+use crate::gas::{ModelKind, catalogue, verdict::Judge};
 use crate::sheet::{GasId, GasModel, Property, StateId};
 use crate::units;
 
@@ -79,6 +79,15 @@ pub(super) fn limit_text(percent: f64) -> String {
 /// Whether the density of humid air is that of CIPM-2007.
 pub(super) fn is_in_cipm(t_k: f64, p_pa: f64) -> bool {
     (CIPM_T_K.0..=CIPM_T_K.1).contains(&t_k) && (CIPM_P_PA.0..=CIPM_P_PA.1).contains(&p_pa)
+}
+
+/// A model within a sentence: `the reference equation of state`, `GERG-2008`.
+pub(super) fn model_words(kind: ModelKind) -> &'static str {
+    match kind {
+        ModelKind::ReferenceEquation => "the reference equation of state",
+        ModelKind::Gerg2008 => "GERG-2008",
+        ModelKind::PengRobinson => "the Peng-Robinson equation",
+    }
 }
 
 /// The publication of the model that judges.

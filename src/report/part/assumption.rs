@@ -11,7 +11,7 @@ use crate::gas::verdict::{IdealError, Judge};
 use crate::report::draft::{Draft, markdown};
 use crate::report::formula::{Formula, Symbol};
 use crate::report::markdown::escape;
-use crate::report::model::{judge_source, limit_text};
+use crate::report::model::{judge_source, limit_text, model_words};
 use crate::report::page::{Plane, Point};
 use crate::report::typeset::{NO_BREAK, typeset_number, typeset_unit};
 use crate::report::verdict::margin;
@@ -211,15 +211,15 @@ fn reason(draft: &Draft, gas: GasId, states: &[&StateVerdict], judge: Option<&Ju
         let errors: Vec<String> = [density, cp, w].into_iter().flatten().collect();
         if !errors.is_empty() {
             sentences.push(format!(
-                "largest error of the ideal law, by the {}: {}; limit {}{NO_BREAK}%",
-                judge.real().kind().words(),
+                "largest error of the ideal law, by {}: {}; limit {}{NO_BREAK}%",
+                model_words(judge.real().kind()),
                 errors.join(", "),
                 limit_text(limit)
             ));
         }
         let beyond: Vec<&&StateVerdict> = states.iter().filter(|state| state.errors.is_none() && state.p_pa.is_some()).collect();
         if !beyond.is_empty() {
-            sentences.push(format!("beyond the range of the {} at {}", judge.real().kind().words(), list(&beyond)));
+            sentences.push(format!("beyond the range of {} at {}", model_words(judge.real().kind()), list(&beyond)));
         }
     } else {
         sentences.push("no reference equation of it is known here, the rules of thumb stand in".to_owned());
@@ -306,8 +306,8 @@ fn judged(draft: &mut Draft, gas: GasId, states: &[&StateVerdict], judge: &Judge
 /// By what the ideal law is judged, what decides, and where the judge itself is extrapolated.
 fn judged_note(draft: &Draft, states: &[&StateVerdict], judge: &Judge, columns: &[Deviation]) -> String {
     let limit = limit_text(draft.input.ideal_limit_percent());
-    let kind = judge.real().kind().words();
-    let mut sentences = vec![format!("Judged by the {kind}: {}.", escape(judge_source(judge)))];
+    let kind = model_words(judge.real().kind());
+    let mut sentences = vec![format!("Judged by {kind}: {}.", escape(judge_source(judge)))];
     let words =
         |percent: bool| columns.iter().filter(move |column| (column.unit == "%") == percent).map(|column| column.property.row().word);
     let (deciding, shown) = (words(true).collect::<Vec<_>>(), words(false).collect::<Vec<_>>());

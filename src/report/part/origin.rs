@@ -1,10 +1,10 @@
 //! Where a result comes from: the relation, and the quantities in it.
 
 use super::answer::emphasis;
-use crate::gas::ModelKind;
 use crate::report::draft::Draft;
 use crate::report::formula::{Formula, Put};
 use crate::report::markdown::escape;
+use crate::report::model::model_words;
 use crate::sheet::{Expr, ExprId, GasId, GasModel, Property, QuantityId, Relation, RelationOrigin};
 use crate::solve::Step;
 
@@ -76,14 +76,6 @@ pub(super) fn gas_title(draft: &Draft, gas: GasId) -> String {
     if title.chars().count() > LONGEST_TITLE { draft.input.sheet.gas(gas).name.clone() } else { title }
 }
 
-/// The kind of a model within a sentence.
-fn model_words(kind: ModelKind) -> &'static str {
-    match kind {
-        ModelKind::Gerg2008 => "GERG-2008 model",
-        other => other.words(),
-    }
-}
-
 /// The name of a relation, for a sentence that begins with it.
 fn relation_name(draft: &Draft, relation: &Relation) -> String {
     let input = draft.input;
@@ -109,7 +101,7 @@ fn relation_name(draft: &Draft, relation: &Relation) -> String {
                 }
                 (GasModel::Real(real), _) => {
                     return format!(
-                        "State {} by the {} of {} (source under States)",
+                        "State {} by {} for {} (source under States)",
                         emphasis(&state.name),
                         model_words(real.kind()),
                         escape(&gas)
