@@ -360,7 +360,7 @@ fn a_report_says_by_what_each_gas_was_calculated() {
             "common practice:",
             "Error of the ideal gas law for argon",
             "Judged by the reference equation of state: Tegeler",
-            "Density, speed of sound decide",
+            "Density and speed of sound decide",
             "Rules of common practice, no source",
             "first reaches 1 %",
             "State full by the reference equation of state for argon (source under States)",

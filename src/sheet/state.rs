@@ -79,11 +79,16 @@ impl Reader<'_> {
             && let Some((pair, why)) = dependent(model, &properties)
             && !self.poisoned_states[index]
         {
+            let humid = matches!(model, GasModel::HumidAir(_));
             let place = fixed
                 .first()
                 .map_or(name.span, |(_, span, _)| *span)
                 .to(fixed.last().map_or(name.span, |(_, _, value)| self.sheet.span_of(*value).unwrap_or(name.span)));
-            self.report(code::dependent_properties::finding(place, &owner, &pair, why));
+            self.report(if humid {
+                code::dependent_properties::of_humid_air(place, &owner, &pair, why)
+            } else {
+                code::dependent_properties::finding(place, &owner, &pair, why)
+            });
             self.poisoned_states[index] = true;
         }
         if self.poisoned_states[index] {

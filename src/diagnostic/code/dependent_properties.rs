@@ -27,6 +27,14 @@ state full of n2 at T = 300 K, p = 7.5 bar abs
 ```
 "##;
 
+/// The same of humid air, which needs three.
+pub(crate) fn of_humid_air(span: Span, state: &str, properties: &str, why: &str) -> Diagnostic {
+    Diagnostic::error(CODE, span, format!("{properties} do not fix the state `{state}`: they depend on each other"))
+        .label(why.to_owned())
+        .fact("humid air has three degrees of freedom: a state needs three properties that vary independently")
+        .help("replace one of them: give the pressure, the temperature and one of `RH`, `T_dew`, `W`")
+}
+
 /// The properties of `state` do not fix it, for the reason `why`.
 pub(crate) fn finding(span: Span, state: &str, pair: &str, why: &str) -> Diagnostic {
     Diagnostic::error(CODE, span, format!("{pair} do not fix the state `{state}`: they depend on each other"))

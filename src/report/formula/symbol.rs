@@ -34,15 +34,20 @@ impl Symbol {
         }
     }
 
-    fn of_field(owner: &str, field: &str) -> Self {
-        let mut symbol = match field {
+    /// The symbol of a property with nothing it belongs to: `cp` is c with an italic p below.
+    pub(in crate::report) fn of_property(field: &str) -> Self {
+        match field {
             "cp" | "cv" => {
                 let below = Subscript { text: field[1..].to_owned(), italic: true };
                 Self { delta: false, base: "c".to_owned(), subscripts: vec![below] }
             }
             "altitude" => Self::of_word("z"),
             _ => Self::of_word(field),
-        };
+        }
+    }
+
+    fn of_field(owner: &str, field: &str) -> Self {
+        let mut symbol = Self::of_property(field);
         symbol.subscripts.push(Subscript::upright(owner.replace(['_', '.'], " ")));
         symbol
     }

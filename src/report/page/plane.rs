@@ -53,8 +53,8 @@ const RULE_A: (f64, f64) = (1.0 / 3.0, 2.0);
 /// Reduced pressure below which rule b holds.
 const RULE_B: f64 = 0.01;
 
-/// Steps of temperature from which on the line of the limit has a gap.
-const GAP_IN_TEMPERATURE: f64 = 1.5;
+/// Ratio of neighbouring temperatures from which on the line of the limit has a gap.
+const GAP_IN_TEMPERATURE: f64 = 1.08;
 
 /// Ratio of neighbouring pressures from which on it has one.
 const GAP_IN_PRESSURE: f64 = 1.6;
@@ -165,15 +165,12 @@ impl Plane {
     /// A gap is where temperatures are missing, or where the pressure jumps: near the Boyle temperature the error falls, turns and
     /// rises, and which of its sides reaches the limit first changes at once.
     fn runs(&self, axes: &Axes) -> Vec<Vec<(f64, f64)>> {
-        let steps = self.line.windows(2).map(|pair| math::ln(pair[1].1 / pair[0].1));
-        let step = steps.fold(f64::INFINITY, f64::min);
         let mut runs: Vec<Vec<(f64, f64)>> = Vec::new();
         let mut last: Option<(f64, f64)> = None;
         for point in &self.line {
             let inside = axes.shows(*point);
-            let follows = last.is_some_and(|(p_r, t_r)| {
-                math::ln(point.1 / t_r) < GAP_IN_TEMPERATURE * step && math::ln(point.0 / p_r).abs() < math::ln(GAP_IN_PRESSURE)
-            });
+            let follows = last
+                .is_some_and(|(p_r, t_r)| point.1 / t_r < GAP_IN_TEMPERATURE && math::ln(point.0 / p_r).abs() < math::ln(GAP_IN_PRESSURE));
             if inside {
                 let place = (axes.x(point.0), axes.y(point.1));
                 match runs.last_mut().filter(|_| follows) {
@@ -192,17 +189,20 @@ impl Plane {
         let width = CHARACTER * self.limit.chars().count() as f64;
         let height = TEXT + 1.0;
         let longest = runs.iter().max_by(|a, b| span(a).total_cmp(&span(b)))?;
-        let beside = |(x, y): (f64, f64), right: bool| {
-            let left = if right { x + 3.0 } else { x - 3.0 - width };
-            Area { left, right: left + width, top: y - height / 2.0, bottom: y + height / 2.0 }
+        let beside = |(x, y): (f64, f64)| {
+            let area =
+                |left: f64, middle: f64| Area { left, right: left + width, top: middle - height / 2.0, bottom: middle + height / 2.0 };
+            let (above, below) = (y - 3.0 - height / 2.0, y + 3.0 + height / 2.0);
+            [area(x + 3.0, y), area(x - 3.0 - width, y), area(x + 1.0, below), area(x - 1.0 - width, above), area(x - width / 2.0, above)]
         };
         // From the middle of the line outwards, so that the label stands well within the drawing.
         let middle = longest.len() / 2;
         let mut order: Vec<usize> = (0..longest.len()).collect();
         order.sort_by_key(|at| at.abs_diff(middle));
-        let on_the_line = |area: &Area| longest.iter().any(|(x, y)| area.left < *x && *x < area.right && area.top < *y && *y < area.bottom);
-        let free = |area: &Area| area.is_inside() && !on_the_line(area) && !taken.iter().any(|other| other.covers(area));
-        order.into_iter().flat_map(|at| [beside(longest[at], true), beside(longest[at], false)]).find(free)
+        let within = |area: &Area, x: f64, y: f64| area.left < x && x < area.right && area.top < y && y < area.bottom;
+        let on_a_line = |area: &Area| runs.iter().flatten().any(|(x, y)| within(area, *x, *y));
+        let free = |area: &Area| area.is_inside() && !on_a_line(area) && !taken.iter().any(|other| other.covers(area));
+        order.into_iter().flat_map(|at| beside(longest[at])).find(free)
     }
 
     /// The marks of the states and their names, placed so that none covers another.
@@ -222,6 +222,9 @@ impl Plane {
             names.push_str("</text>");
             taken.push(area);
         }
+        // Names keep off the line as well.
+        let beside = |(x, y): &(f64, f64)| Area { left: x - 2.0, right: x + 2.0, top: y - 2.0, bottom: y + 2.0 };
+        taken.extend(runs.iter().flatten().map(beside));
         for (label, at) in merged(&self.points, &places) {
             let (x, y) = places[at];
             let (area, far) = Area::beside(x, y, CHARACTER * label.chars().count() as f64, &taken);

@@ -7,7 +7,7 @@ use uom::si::thermodynamic_temperature::kelvin;
 
 use super::answer::{emphasis, words};
 use super::gas_model::reduced_number;
-use crate::gas::verdict::{IdealError, Judge};
+use crate::gas::verdict::{IdealError, Judge, PressureLimit};
 use crate::report::draft::{Draft, markdown};
 use crate::report::formula::{Formula, Symbol};
 use crate::report::markdown::escape;
@@ -68,7 +68,6 @@ struct JudgedRow {
 #[derive(Clone, Copy)]
 struct Deviation {
     property: Property,
-    symbol: &'static str,
     unit: &'static str,
     of: fn(&IdealError) -> f64,
     /// From SI to the unit, and the decimal place; a percentage has its own.
@@ -77,13 +76,12 @@ struct Deviation {
 }
 
 impl Deviation {
-    const DENSITY: Self =
-        Self { property: Property::Rho, symbol: "rho", unit: "%", of: |errors| errors.density_percent, factor: 1.0, place: -2 };
+    const DENSITY: Self = Self { property: Property::Rho, unit: "%", of: |errors| errors.density_percent, factor: 1.0, place: -2 };
     const OTHERS: [Self; 4] = [
-        Self { property: Property::Cp, symbol: "c_p", unit: "%", of: |errors| errors.cp_percent, factor: 1.0, place: -2 },
-        Self { property: Property::W, symbol: "w", unit: "%", of: |errors| errors.w_percent, factor: 1.0, place: -2 },
-        Self { property: Property::H, symbol: "h", unit: "kJ/kg", of: |errors| errors.h_j_kg, factor: 1e-3, place: -2 },
-        Self { property: Property::S, symbol: "s", unit: "J/(kg.K)", of: |errors| errors.s_j_kg_k, factor: 1.0, place: -2 },
+        Self { property: Property::Cp, unit: "%", of: |errors| errors.cp_percent, factor: 1.0, place: -2 },
+        Self { property: Property::W, unit: "%", of: |errors| errors.w_percent, factor: 1.0, place: -2 },
+        Self { property: Property::H, unit: "kJ/kg", of: |errors| errors.h_j_kg, factor: 1e-3, place: -2 },
+        Self { property: Property::S, unit: "J/(kg.K)", of: |errors| errors.s_j_kg_k, factor: 1.0, place: -2 },
     ];
 }
 
@@ -268,7 +266,7 @@ fn judged(draft: &mut Draft, gas: GasId, states: &[&StateVerdict], judge: &Judge
     let heads = columns
         .iter()
         .map(|column| {
-            let symbol = draft.math(&Formula::Symbol(Symbol::of_name(column.symbol)));
+            let symbol = draft.math(&Formula::Symbol(Symbol::of_property(column.property.row().field)));
             markdown(if column.unit == "%" { format!("{symbol}, %") } else { format!("{symbol}, {}", escape(&typeset_unit(column.unit))) })
         })
         .collect();
@@ -307,12 +305,19 @@ fn judged(draft: &mut Draft, gas: GasId, states: &[&StateVerdict], judge: &Judge
 fn judged_note(draft: &Draft, states: &[&StateVerdict], judge: &Judge, columns: &[Deviation]) -> String {
     let limit = limit_text(draft.input.ideal_limit_percent());
     let kind = model_words(judge.real().kind());
-    let mut sentences = vec![format!("Judged by {kind}: {}.", escape(judge_source(judge)))];
+    // The publication of a named model begins with its name.
+    let source = escape(judge_source(judge));
+    let mut sentences =
+        vec![if source.starts_with(kind) { format!("Judged by {source}.") } else { format!("Judged by {kind}: {source}.") }];
     let words =
         |percent: bool| columns.iter().filter(move |column| (column.unit == "%") == percent).map(|column| column.property.row().word);
     let (deciding, shown) = (words(true).collect::<Vec<_>>(), words(false).collect::<Vec<_>>());
     let decides = if deciding.len() > 1 { "decide" } else { "decides" };
-    sentences.push(format!("{} {decides} against the limit of the sheet, {limit}{NO_BREAK}%.", capitalised(&deciding.join(", "))));
+    let deciding = match deciding.split_last() {
+        Some((last, others)) if !others.is_empty() => format!("{} and {last}", others.join(", ")),
+        _ => deciding.concat(),
+    };
+    sentences.push(format!("{} {decides} against the limit of the sheet, {limit}{NO_BREAK}%.", capitalised(&deciding)));
     if !shown.is_empty() {
         sentences.push(format!("Differences in {} do not decide: their zero is a convention.", shown.join(" and ")));
     }
@@ -326,13 +331,31 @@ fn judged_note(draft: &Draft, states: &[&StateVerdict], judge: &Judge, columns: 
     }
     let beyond = names(&|state| state.errors.is_none());
     if !beyond.is_empty() {
-        sentences.push(format!("It tells nothing at {beyond}, which is left for the checker to judge."));
+        sentences.push(format!("It has no answer at {beyond}: that is left for the checker to judge."));
     }
     sentences.join(" ")
 }
 
 /// Points of the line of the limit in the figure.
 const POINTS_OF_THE_LINE: u32 = 90;
+
+/// Points by which the line goes on for gases that are used far above their critical temperature: a step of 5 % of the temperature.
+const STEP_FAR_ABOVE: f64 = 1.05;
+
+/// The line of the limit, on to twice the hottest state where that is far above the critical temperature.
+fn line(judge: &Judge, limit_percent: f64, hottest: f64) -> Vec<(f64, f64)> {
+    let mut line = judge.line_in_reduced_plane(limit_percent, POINTS_OF_THE_LINE);
+    let (Some((t_c_k, p_c_pa)), Some((_, last))) = (judge.real().critical_point(), line.last().copied()) else { return line };
+    let end = (2.0 * hottest).min(judge.real().range().t_limit_high_k / t_c_k);
+    let mut t_r = last * STEP_FAR_ABOVE;
+    while t_r < end {
+        if let Ok(PressureLimit::Reached { p_pa }) = judge.pressure_limit(t_r * t_c_k, limit_percent) {
+            line.push((p_pa / p_c_pa, t_r));
+        }
+        t_r *= STEP_FAR_ABOVE;
+    }
+    line
+}
 
 /// The figure of a gas with at least one state of known pressure and temperature.
 fn plane(draft: &Draft, gas: GasId, states: &[&StateVerdict], judge: Option<&Judge>, number: usize) -> Option<(PlaneView, Plane)> {
@@ -368,7 +391,8 @@ fn plane(draft: &Draft, gas: GasId, states: &[&StateVerdict], judge: Option<&Jud
         return None;
     }
     let limit = draft.input.ideal_limit_percent();
-    let line = judge.map_or_else(Vec::new, |judge| judge.line_in_reduced_plane(limit, POINTS_OF_THE_LINE));
+    let hottest = points.iter().map(|point| point.t_r).fold(0.0, f64::max);
+    let line = judge.map_or_else(Vec::new, |judge| line(judge, limit, hottest));
     let limit = format!("{}{NO_BREAK}%", limit_text(limit));
     let view = PlaneView {
         number,

@@ -67,7 +67,7 @@ fn table(draft: &mut Draft, gas: GasId, states: &[StateId], columns: &[(Property
     let heads = columns
         .iter()
         .map(|(property, shown)| {
-            let symbol = draft.math(&Formula::Symbol(Symbol::of_name(bare_name(*property))));
+            let symbol = draft.math(&Formula::Symbol(Symbol::of_property(property.row().field)));
             let unit = shown.text();
             markdown(if unit.is_empty() { symbol } else { format!("{symbol}, {}", escape(&typeset_unit(&unit))) })
         })
@@ -88,13 +88,4 @@ fn table(draft: &mut Draft, gas: GasId, states: &[StateId], columns: &[(Property
         .filter(|row: &Row| row.values.iter().any(|value| !value.is_empty()))
         .collect();
     StateTable { gas: input.gas_title(gas), columns: heads, rows, model: markdown(model) }
-}
-
-/// A name whose symbol is that of a property.
-fn bare_name(property: Property) -> &'static str {
-    match property {
-        Property::Cp => "c_p",
-        Property::Cv => "c_v",
-        other => other.row().field,
-    }
 }
