@@ -120,6 +120,9 @@ impl Maker<'_> {
     fn states(&self) -> Vec<StateObject> {
         let sheet = self.input.sheet;
         let verdict_of = |id: StateId| self.input.solution.and_then(|solution| solution.states.iter().find(|verdict| verdict.state == id));
+        // Of each gas, once: a model of a mixture takes its time to be set up.
+        let mut sources: Vec<Option<&'static str>> = vec![None; sheet.gases.len()];
+        let source_of_judge = |gas: GasId| Judge::of(&sheet.gas(gas).gas).as_ref().map_or("", judge_source);
         // A state whose gas is in error has none to be told.
         let states = sheet.states.iter().enumerate().filter(|(_, state)| (state.gas.0 as usize) < sheet.gases.len());
         states
@@ -139,7 +142,10 @@ impl Maker<'_> {
                     model_kind: by.kind,
                     model_source: by.source,
                     extrapolated: by.extrapolated,
-                    ideal_errors: verdict.and_then(|verdict| verdict.errors).map(|errors| self.ideal_errors(state.gas, &errors)),
+                    ideal_errors: verdict.and_then(|verdict| verdict.errors).map(|errors| {
+                        let source = sources[state.gas.0 as usize].get_or_insert_with(|| source_of_judge(state.gas));
+                        self.ideal_errors(&errors, source)
+                    }),
                     ideal_error_percent: verdict.and_then(|verdict| verdict.ideal_error_percent),
                     verdict: verdict.map(|verdict| verdict.verdict.word()),
                     rules: verdict.map(|verdict| RulesObject { a: verdict.rule_a, b: verdict.rule_b }),
@@ -149,9 +155,8 @@ impl Maker<'_> {
             .collect()
     }
 
-    fn ideal_errors(&self, gas: GasId, errors: &IdealError) -> IdealErrorsObject {
+    fn ideal_errors(&self, errors: &IdealError, source: &str) -> IdealErrorsObject {
         let number = |value: f64| Some(value).filter(|value| value.is_finite());
-        let judge = Judge::of(&self.input.sheet.gas(gas).gas);
         IdealErrorsObject {
             density_percent: errors.density_percent,
             cp_percent: number(errors.cp_percent),
@@ -159,7 +164,7 @@ impl Maker<'_> {
             h_difference: number(errors.h_j_kg),
             s_difference: number(errors.s_j_kg_k),
             judge: errors.judge.words(),
-            judge_source: judge.as_ref().map_or_else(String::new, |judge| judge_source(judge).to_owned()),
+            judge_source: source.to_owned(),
             extrapolated: errors.is_extrapolated,
             limit_percent: self.input.ideal_limit_percent(),
         }

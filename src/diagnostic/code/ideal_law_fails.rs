@@ -38,7 +38,7 @@ pub(crate) fn finding(span: Span, state: &str, gas: &str, errors: &str, limit: &
     let replacement = if model.start == model.end { ", real" } else { "real" };
     Diagnostic::warning(CODE, span, format!("the ideal gas law does not hold at the state `{state}`: it is off by {errors}"))
         .label(format!("more than {limit} %"))
-        .fact(format!("judged by the reference equation of {gas} at the same pressure and temperature"))
+        .fact(format!("judged by the equation of state of {gas} at the same pressure and temperature"))
         .help(format!("write `, real` behind the gas `{name}`, or allow more with `limits: {{ideal gas: …}}` in the head"))
         .edit(model, replacement)
 }
