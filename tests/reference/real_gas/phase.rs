@@ -1,5 +1,6 @@
 //! What is a gas and what is not, pure and mixed.
 
+use gaswright::gas::eos::Equation;
 use gaswright::gas::model_weakness::weaknesses;
 use gaswright::gas::phase::{BorderModel, PhaseGuard};
 use gaswright::gas::real_gas::ModelKind;
@@ -114,4 +115,20 @@ fn weak_models_are_told() {
     assert!(of(&[("nitrogen", 0.9), ("ammonia", 0.1)])[0].text.contains("Peng-Robinson"));
     assert_eq!(of(&[("nitrogen", 0.9), ("water", 0.1)])[0].component, "water");
     assert!(weaknesses(&pure("helium"), &RealGas::new(&pure("helium")).unwrap()).is_empty());
+}
+
+/// Every gas that has an equation, along its whole saturation line, a thousandth on either side.
+#[test]
+fn the_line_divides_for_every_gas() {
+    for name in Equation::names().into_iter().filter(|name| *name != "dry air") {
+        let equation = Equation::of_name(name).unwrap();
+        let (c, gas) = (equation.constants(), RealGas::new(&pure(name)).unwrap());
+        for i in 0..40 {
+            let t = c.t_min_k + (0.995 * c.t_c_own_k - c.t_min_k) * f64::from(i) / 39.0;
+            let p = equation.saturation(t).unwrap().p_pa;
+            let above = gas.density_kg_m3(t, 1.001 * p);
+            assert!(matches!(above, Err(StateError::Liquid { .. })), "{name} {t} K: {above:?}");
+            assert!(gas.density_kg_m3(t, 0.999 * p).is_ok(), "{name} {t} K");
+        }
+    }
 }
