@@ -86,8 +86,12 @@ fn hydrocarbons_are_judged_by_the_cubic_equation() {
 /// The library hands out the liquid of air at 130 K and 3.5 MPa and of a rich gas at 250 K and 5 MPa, and accepts what is beyond its range.
 #[test]
 fn what_the_library_lets_through_is_refused() {
-    let air = RealGas::new(&pure("dry air")).unwrap();
+    let air = RealGas::new(&mixture(&[("nitrogen", 0.7812), ("oxygen", 0.2096), ("argon", 0.0092)])).unwrap();
     assert_eq!(air.kind(), ModelKind::Gerg2008);
+    let as_one_substance = RealGas::new(&pure("dry air")).unwrap();
+    assert_eq!(as_one_substance.kind(), ModelKind::ReferenceEquation);
+    assert!(as_one_substance.density_kg_m3(130.0, 3.5e6).is_err());
+    assert!(as_one_substance.density_kg_m3(800.0, 1e5).is_ok());
     assert!(air.density_kg_m3(130.0, 3.5e6).is_err());
     let rich = RealGas::new(&mixture(&[("methane", 0.7), ("ethane", 0.1), ("propane", 0.1), ("n-butane", 0.1)])).unwrap();
     assert!(matches!(rich.density_kg_m3(250.0, 5e6), Err(StateError::Condenses { .. })));
