@@ -42,6 +42,8 @@ pub(super) struct LiteralInfo {
     pub(super) kind: Kind,
     /// It stands for a gauge reading, to which the pressure of the site is added.
     pub(super) gauge: bool,
+    /// Where its unit stands.
+    pub(super) unit: Option<Span>,
 }
 
 /// The work of reading one sheet.
@@ -57,6 +59,10 @@ pub(super) struct Reader<'a> {
     pub(super) literals: Vec<LiteralInfo>,
     /// Beside [`Sheet::quantities`]: whether the dimension has still to be found.
     pub(super) undetermined: Vec<bool>,
+    /// Quantities whose dimension the relations force, in order.
+    pub(super) inferred: Vec<QuantityId>,
+    /// Statements whose terms are not of one dimension.
+    pub(super) mismatches: Vec<super::wrong_unit::Mismatch>,
     /// Beside [`Sheet::quantities`]: whether its line, or a line that it hangs on, is in error.
     pub(super) poisoned: Vec<bool>,
     /// Beside [`Sheet::states`].
@@ -112,6 +118,8 @@ pub fn read(tree: &Tree, text: &str) -> (Sheet, Vec<Diagnostic>) {
         pending_live: Vec::new(),
         literals: Vec::new(),
         undetermined: Vec::new(),
+        inferred: Vec::new(),
+        mismatches: Vec::new(),
         poisoned: Vec::new(),
         poisoned_states: Vec::new(),
         site: Site::default(),
@@ -134,6 +142,7 @@ pub fn read(tree: &Tree, text: &str) -> (Sheet, Vec<Diagnostic>) {
     reader.infer_kinds();
     reader.check_relations();
     reader.check_clauses();
+    reader.wrong_units();
     reader.settle_shown_units();
     reader.drop_what_hangs_on_errors();
     // In a sheet with errors every slip may be the shadow of one.

@@ -28,6 +28,14 @@ answer p in kPa abs
 ```
 "##;
 
+/// A basis in another spelling behind a unit of pressure: `bar g`, `bar(g)`, `bar absolute`. `whole` is the unit with it.
+pub(crate) fn otherwise_spelled(span: Span, written: &str, whole: Span, unit: &str, basis: &str) -> Diagnostic {
+    Diagnostic::error(CODE, span, format!("`{written}` is not how a pressure says its basis"))
+        .label("the basis of this pressure")
+        .help(format!("write `{unit} {basis}`"))
+        .safe_edit(whole, format!("{unit} {basis}"))
+}
+
 /// A pressure `text` without a basis, or a unit of pressure in which a value is to be shown; `meanings` says what each basis would
 /// make of it.
 pub(crate) fn finding(span: Span, text: &str, meanings: Option<[String; 2]>) -> Diagnostic {
