@@ -84,12 +84,56 @@ impl Reader<'_> {
             } else {
                 USUAL.iter().find(|usual| usual.dimension == quantity.dimension)
             };
+            if let Some(finding) = self.gauge_for_absolute(QuantityId(at as u32)) {
+                self.report(finding);
+                continue;
+            }
+            let quantity = &self.sheet.quantities[at];
+            let Some(reading) = &quantity.reading else { continue };
             let Some(usual) = usual else { continue };
             if reading.si.abs() < usual.low || reading.si.abs() > usual.high {
                 let finding = code::unusual_size::finding(quantity.span, &quantity.name, &reading.text, usual.word, usual.range);
                 self.report(finding);
             }
         }
+    }
+
+    /// An absolute pressure of a state below the atmosphere of the site, though nothing says that a vacuum is meant: the reading of a
+    /// gauge, very likely.
+    fn gauge_for_absolute(&self, id: QuantityId) -> Option<crate::diagnostic::Diagnostic> {
+        /// Part of the pressure of the site below which a vacuum is deep, and no gauge was read.
+        const DEEP: f64 = 0.1;
+        /// Words by which a low pressure is meant (common practice).
+        const MEANT: &[&str] = &[
+            "vacuum",
+            "suction",
+            "evacu",
+            "partial",
+            "vapour",
+            "vapor",
+            "atmospher",
+            "ambient",
+            "baromet",
+            "saturat",
+            "air pressure",
+            "negative",
+        ];
+        let (quantity, site) = (self.sheet.quantity(id), self.site.p_pa?);
+        let reading = quantity.reading.as_ref()?;
+        let is_absolute = quantity.dimension == Dimension::PRESSURE && quantity.shown.basis == Some(Basis::Absolute);
+        if !is_absolute || reading.si >= site * (1.0 - super::value::WEATHER) || reading.si < DEEP * site {
+            return None;
+        }
+        let said = format!("{} {}", quantity.description, quantity.source).to_lowercase();
+        let fixes_a_state = self.sheet.relations.iter().any(|relation| {
+            matches!(relation.origin, RelationOrigin::At(_, super::Property::P))
+                && self.sheet.exprs.get(relation.right) == Expr::Quantity(id)
+        });
+        if !fixes_a_state || MEANT.iter().any(|word| said.contains(word)) {
+            return None;
+        }
+        let kpa = |pa: f64| format!("{} kPa abs", units::write_figures(pa / 1000.0, 4));
+        Some(code::unusual_size::vacuum(quantity.span, &quantity.name, &reading.text, &kpa(site), &kpa(reading.si + site)))
     }
 
     /// Inputs that nothing uses and results that nothing asks for.

@@ -12,7 +12,7 @@ use super::{Expr, Kind, Origin, QuantityId, Reading, ReferenceConditions, Relati
 
 /// Pressure of a place against the standard atmosphere of its altitude: beyond this the two are told to contradict each
 /// other. Weather moves a barometer by some 3 % about its mean (common practice, no source).
-const WEATHER: f64 = 0.04;
+pub(super) const WEATHER: f64 = 0.04;
 
 /// A number with its unit and basis in SI.
 #[derive(Clone, Debug)]
@@ -183,7 +183,15 @@ impl Reader<'_> {
                 let kpa = |pa: f64| format!("{} kPa abs", units::write_figures(pa / 1000.0, 4));
                 [kpa(unit.to_si(literal.value)), kpa(unit.to_si(literal.value) + site)]
             });
-            self.report(code::pressure_without_basis::finding(Span { start: literal.span.start, end: text.span.end }, &written, meanings));
+            let (span, pressure) = (Span { start: literal.span.start, end: text.span.end }, unit.to_si(literal.value));
+            let finding = if pressure < 0.0 {
+                code::pressure_without_basis::negative(span, &written)
+            } else {
+                let finding = code::pressure_without_basis::finding(span, &written, meanings);
+                let is_vacuum = self.site.p_pa.is_some_and(|site| pressure < site * (1.0 - WEATHER));
+                if is_vacuum { code::pressure_without_basis::vacuum(finding) } else { finding }
+            };
+            self.report(finding);
             return None;
         }
         let basis = self.basis(text, &unit, true)?;
