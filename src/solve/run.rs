@@ -59,6 +59,8 @@ pub(super) struct Evaluation<'a> {
     tangents: Vec<f64>,
     magnitudes: Vec<f64>,
     adjoints: Vec<f64>,
+    /// It follows a solution that was judged: other solutions of its blocks are not looked for again.
+    repeated: bool,
 }
 
 /// Evaluates a plan at the inputs of its sheet.
@@ -71,6 +73,7 @@ pub(super) fn evaluate<'a>(sheet: &Sheet, plan: &'a Plan, inputs: &[f64]) -> Eva
         tangents: vec![0.0; n],
         magnitudes: vec![0.0; n],
         adjoints: vec![0.0; n],
+        repeated: false,
     };
     for segment in &plan.segments {
         match segment {
@@ -93,6 +96,7 @@ impl<'a> Evaluation<'a> {
     /// block was solved.
     pub(super) fn again(&mut self, sheet: &Sheet, inputs: &[f64], nominal: &[f64]) -> bool {
         let plan = self.plan;
+        self.repeated = true;
         for segment in &plan.segments {
             match segment {
                 Segment::Straight(range) => plan.tape.evaluate(range.clone(), inputs, &mut self.values),
@@ -330,7 +334,7 @@ impl Evaluation<'_> {
                     solutions.push(run);
                 }
                 // With a guess for all of them the first solution is the one that is meant; others are looked for to be told.
-                if guided && unknowns.len() > MOST_UNKNOWNS_SEARCHED {
+                if guided && (self.repeated || unknowns.len() > MOST_UNKNOWNS_SEARCHED) {
                     break;
                 }
             } else if best.as_ref().is_none_or(|best| run.residual < best.residual) {
@@ -343,7 +347,9 @@ impl Evaluation<'_> {
                 .zip(&block.bounds)
                 .all(|(x, bounds)| *x >= 0.0 || bounds.low.is_some() || !physics::is_taken_positive(sheet.quantity(bounds.quantity)))
         };
-        if solutions.iter().any(positive) {
+        // A guess that leads to a negative length means it.
+        let means_negative = guided && solutions.first().is_some_and(|first| !positive(first));
+        if !means_negative && solutions.iter().any(positive) {
             solutions.retain(positive);
         }
         let distance = |run: &newton::Run| -> f64 {
