@@ -33,7 +33,6 @@ fn stages(criterion: &mut Criterion) {
             sheet: &solved.sheet,
             solution: solved.solution.as_ref(),
             findings: &solved.findings,
-            digest: &solved.digest,
         };
         let templates = Templates::built_in();
         group.bench_function("report", |bencher| bencher.iter(|| report::report(&input, Format::Html, &templates)));

@@ -1,11 +1,9 @@
 //! The way of a sheet through the rooms.
 
-use sha2::{Digest, Sha256};
-
 use crate::diagnostic::{Diagnostic, code, finding};
 use crate::sheet::{self, Sheet};
 use crate::solve::{self, Solution, Verdict};
-use crate::syntax::{self, StatementKind, Tree};
+use crate::syntax::{self, Tree};
 
 /// A sheet read and checked: names, units, dimensions, kinds, structure.
 #[derive(Clone, Debug)]
@@ -16,8 +14,6 @@ pub struct Checked {
     pub sheet: Sheet,
     /// What there is to know of it, in the order of the text.
     pub findings: Vec<Diagnostic>,
-    /// The digest of its content.
-    pub digest: String,
 }
 
 /// A sheet solved, or the findings that say why not.
@@ -31,8 +27,6 @@ pub struct Solved {
     pub solution: Option<Solution>,
     /// What there is to know of it, in the order of the text.
     pub findings: Vec<Diagnostic>,
-    /// The digest of its content.
-    pub digest: String,
 }
 
 /// What became of a sheet, as the exit status of a command says it.
@@ -66,8 +60,7 @@ pub fn check(text: &str) -> Checked {
     findings.extend(more);
     findings.extend(solve::check(&sheet));
     settle(&mut findings);
-    let digest = digest(&tree, text);
-    Checked { tree, sheet, findings, digest }
+    Checked { tree, sheet, findings }
 }
 
 /// Reads, checks and solves a sheet.
@@ -86,8 +79,7 @@ pub fn solve(text: &str) -> Solved {
         None
     };
     settle(&mut findings);
-    let digest = digest(&tree, text);
-    Solved { tree, sheet, solution, findings, digest }
+    Solved { tree, sheet, solution, findings }
 }
 
 /// Puts findings in the order of the text. Beside an error, that something is used by nothing may be its shadow and is not
@@ -97,32 +89,4 @@ fn settle(findings: &mut Vec<Diagnostic>) {
         findings.retain(|finding| finding.code != code::unused_input::CODE);
     }
     finding::sort(findings);
-}
-
-/// The digest of what a sheet says: of its head and of the canonical text of its statements. Layout, comments and the order
-/// of lines do not enter; prose and titles do.
-#[must_use]
-pub fn digest(tree: &Tree, text: &str) -> String {
-    let mut lines: Vec<String> = tree
-        .statements
-        .iter()
-        .map(|statement| match &statement.kind {
-            StatementKind::Bad { .. } => statement.span.of(text).split_whitespace().collect::<Vec<_>>().join(" "),
-            _ => syntax::canonical(tree, text, statement),
-        })
-        .collect();
-    lines.sort();
-    let mut hash = Sha256::new();
-    if let Some(head) = tree.head.span {
-        hash.update(head.of(text).replace("\r\n", "\n").as_bytes());
-    }
-    for line in lines {
-        hash.update(b"\n");
-        hash.update(line.as_bytes());
-    }
-    let mut digest = String::from("sha256:");
-    for byte in hash.finalize() {
-        digest.push_str(&format!("{byte:02x}"));
-    }
-    digest
 }

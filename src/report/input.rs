@@ -3,7 +3,7 @@
 use crate::diagnostic::{Diagnostic, LineIndex};
 use crate::sheet::{Quantity, QuantityId, Sheet};
 use crate::solve::Solution;
-use crate::syntax::Tree;
+use crate::syntax::{self, Tree};
 
 /// A sheet with all that is known of it. Plain data of the rooms before: nothing in it was made for a report.
 #[derive(Clone, Copy, Debug)]
@@ -20,8 +20,6 @@ pub struct Input<'a> {
     pub solution: Option<&'a Solution>,
     /// Everything that was found, in the order of the text.
     pub findings: &'a [Diagnostic],
-    /// Digest of the sheet: `sha256:` and 64 hexadecimal digits.
-    pub digest: &'a str,
 }
 
 impl<'a> Input<'a> {
@@ -49,9 +47,9 @@ impl<'a> Input<'a> {
         self.tree.statements.get(statement).and_then(|statement| statement.description.as_ref()).map_or("", |text| &text.text)
     }
 
-    /// The digest without the name of its function, first digits in groups of four: `9f3a 61c2 07de`.
-    pub(super) fn short_digest(&self) -> String {
-        let digits: Vec<char> = self.digest.rsplit(':').next().unwrap_or_default().chars().take(12).collect();
-        digits.chunks(4).map(|group| group.iter().collect::<String>()).collect::<Vec<_>>().join(" ")
+    /// Digest of the sheet: `sha256:` and 64 hexadecimal digits.
+    #[must_use]
+    pub fn digest(&self) -> String {
+        syntax::digest(self.tree, self.text)
     }
 }

@@ -30,7 +30,7 @@ pub fn result(input: &Input) -> ResultObject {
             document: text(&head.document),
             revision: text(&head.revision),
             purpose: text(&head.purpose),
-            digest: input.digest.to_owned(),
+            digest: input.digest(),
         },
         tool: ToolObject { name: env!("CARGO_PKG_NAME"), version: env!("CARGO_PKG_VERSION") },
         status: if input.solution.is_some() { "solved" } else { "failed" },

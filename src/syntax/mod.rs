@@ -26,7 +26,7 @@ pub mod tree;
 mod word;
 
 pub use head::EDITION;
-pub use layout::{canonical, tidy};
+pub use layout::{canonical, digest, tidy};
 pub use parse::{decode, parse};
 pub use tree::{
     AnswerItem, Basis, BinaryOp, Comparison, Condition, ConditionKind, Expr, ExprId, ExprKind, Function, GasPart, Head, Literal, Model,

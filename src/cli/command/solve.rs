@@ -94,8 +94,8 @@ pub(super) fn solved(file: &SheetFile) -> Solved {
     match &file.refused {
         None => crate::solve(&file.text),
         Some(_) => {
-            let Checked { tree, sheet, findings, digest } = super::check::checked(file);
-            Solved { tree, sheet, solution: None, findings, digest }
+            let Checked { tree, sheet, findings } = super::check::checked(file);
+            Solved { tree, sheet, solution: None, findings }
         }
     }
 }
@@ -109,7 +109,6 @@ pub(super) fn input<'a>(file: &'a SheetFile, solved: &'a Solved) -> Input<'a> {
         sheet: &solved.sheet,
         solution: solved.solution.as_ref(),
         findings: &solved.findings,
-        digest: &solved.digest,
     }
 }
 
@@ -122,7 +121,6 @@ pub(super) fn object_of_checked(file: &SheetFile, checked: &Checked) -> String {
         sheet: &checked.sheet,
         solution: None,
         findings: &checked.findings,
-        digest: &checked.digest,
     };
     let mut object = report::result(&input);
     if !checked.findings.iter().any(Diagnostic::is_error) {

@@ -41,6 +41,7 @@ pub(in crate::report) fn head(draft: &Draft) -> Head {
     let text = |text: &Option<crate::syntax::Text>| text.as_ref().map(|text| text.text.clone()).filter(|text| !text.trim().is_empty());
     let file = input.path.rsplit(['/', '\\']).next().unwrap_or(input.path);
     let title = text(&head.title).unwrap_or_else(|| file.strip_suffix(".gw").unwrap_or(file).to_owned());
+    let digest = input.digest();
     Head {
         title,
         document: text(&head.document),
@@ -48,9 +49,15 @@ pub(in crate::report) fn head(draft: &Draft) -> Head {
         purpose: text(&head.purpose),
         roles: ROLES.iter().map(|name| Role { name, state: "not signed" }).collect(),
         sign_off: "unsigned",
-        digest: input.digest.to_owned(),
-        short_digest: input.short_digest(),
+        short_digest: short(&digest),
+        digest,
         tool: format!("{} {}", env!("CARGO_PKG_NAME"), env!("CARGO_PKG_VERSION")),
         path: input.path.to_owned(),
     }
+}
+
+/// A digest without the name of its function, first digits in groups of four: `9f3a 61c2 07de`.
+fn short(digest: &str) -> String {
+    let digits: Vec<char> = digest.rsplit(':').next().unwrap_or_default().chars().take(12).collect();
+    digits.chunks(4).map(|group| group.iter().collect::<String>()).collect::<Vec<_>>().join(" ")
 }
