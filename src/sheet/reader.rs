@@ -1,5 +1,6 @@
 //! Reads a tree: settles names, units, dimensions and kinds, and turns states into relations.
 
+use std::cell::Cell;
 use std::collections::{BTreeMap, HashMap};
 
 use crate::diagnostic::{Diagnostic, Span, code};
@@ -63,6 +64,8 @@ pub(super) struct Reader<'a> {
     pub(super) inferred: Vec<QuantityId>,
     /// Statements whose terms are not of one dimension.
     pub(super) mismatches: Vec<super::wrong_unit::Mismatch>,
+    /// Statements that may still be looked at for the unit behind them.
+    pub(super) statements_left: Cell<usize>,
     /// Beside [`Sheet::quantities`]: whether its line, or a line that it hangs on, is in error.
     pub(super) poisoned: Vec<bool>,
     /// Beside [`Sheet::states`].
@@ -120,6 +123,7 @@ pub fn read(tree: &Tree, text: &str) -> (Sheet, Vec<Diagnostic>) {
         undetermined: Vec::new(),
         inferred: Vec::new(),
         mismatches: Vec::new(),
+        statements_left: Cell::new(super::wrong_unit::MOST_STATEMENTS),
         poisoned: Vec::new(),
         poisoned_states: Vec::new(),
         site: Site::default(),

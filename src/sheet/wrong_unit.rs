@@ -18,8 +18,11 @@ use super::{Condition, Expr, ExprId, Origin, QuantityId, RelationOrigin};
 /// Most units that are tried in one sheet; with more errors than that the single findings have to do.
 const MOST_SUSPECTS: usize = 64;
 
+/// Most statements in error: more of them are the work of a program.
+const MOST_MISMATCHES: usize = 100;
+
 /// Most statements that are looked at for all suspects together: a fraction of a second.
-const MOST_STATEMENTS: usize = 200_000;
+pub(super) const MOST_STATEMENTS: usize = 300_000;
 
 /// Most dimensions that one unit is tried with.
 const MOST_DEMANDS: usize = 4;
@@ -104,10 +107,14 @@ impl Reader<'_> {
 
     /// Looks for the units behind the mismatches.
     pub(super) fn wrong_units(&mut self) {
+        if self.mismatches.is_empty() || self.mismatches.len() > MOST_MISMATCHES {
+            return;
+        }
+        let definitions = self.definitions();
         let mut gone: Vec<usize> = Vec::new();
         let mut told: Vec<Diagnostic> = Vec::new();
         // Each round takes at least two mismatches away.
-        while let Some((cure, cures)) = self.best_cure() {
+        while let Some((cure, cures)) = self.best_cure(&definitions) {
             let Suspect::Quantity(id) = cure.suspect else { break };
             if cure.weight < 2 || cures > 1 || cure.cured.iter().filter(|cured| **cured).count() < 2 {
                 break;
@@ -121,7 +128,7 @@ impl Reader<'_> {
             let solved: Vec<Mismatch> = solved;
             gone.extend(solved.into_iter().flat_map(|mismatch| mismatch.findings));
         }
-        self.offer_cures();
+        self.offer_cures(&definitions);
         if gone.is_empty() {
             return;
         }
@@ -137,10 +144,13 @@ impl Reader<'_> {
     }
 
     /// The suspect that takes the most contradictions away, and how many do so equally well.
-    fn best_cure(&self) -> Option<(Cure, usize)> {
+    fn best_cure(&self, definitions: &[Option<ExprId>]) -> Option<(Cure, usize)> {
+        if self.mismatches.len() < 2 {
+            return None;
+        }
         let mut suspects: Vec<Suspect> = Vec::new();
         for mismatch in &self.mismatches {
-            for suspect in self.suspects(mismatch) {
+            for suspect in self.suspects(mismatch, definitions) {
                 if matches!(suspect, Suspect::Quantity(_)) && !suspects.contains(&suspect) {
                     suspects.push(suspect);
                 }
@@ -148,9 +158,6 @@ impl Reader<'_> {
             if suspects.len() > MOST_SUSPECTS {
                 return None;
             }
-        }
-        if self.mismatches.len() < 2 {
-            return None;
         }
         let mut cures = self.cures(&suspects);
         let most = cures.iter().map(|cure| cure.weight).max()?;
@@ -174,7 +181,10 @@ impl Reader<'_> {
 
     /// Those of the suspects that take contradictions away.
     fn cures(&self, suspects: &[Suspect]) -> Vec<Cure> {
-        if suspects.is_empty() || suspects.len() > MOST_SUSPECTS || self.statements_with_claims() * suspects.len() > MOST_STATEMENTS {
+        if suspects.is_empty()
+            || suspects.len() > MOST_SUSPECTS
+            || self.statements_with_claims() * (suspects.len() + 1) > self.statements_left.get()
+        {
             return Vec::new();
         }
         let before = self.trial(None, None).contradictions;
@@ -201,12 +211,25 @@ impl Reader<'_> {
         cures
     }
 
+    /// Beside the quantities: the expression of each `let` that gives no unit.
+    fn definitions(&self) -> Vec<Option<ExprId>> {
+        let mut definitions = vec![None; self.sheet.quantities.len()];
+        for relation in &self.sheet.relations {
+            if let (RelationOrigin::Let, Expr::Quantity(id)) = (relation.origin, self.sheet.exprs.get(relation.left))
+                && self.inferred.binary_search(&id).is_ok()
+            {
+                definitions[id.0 as usize] = Some(relation.right);
+            }
+        }
+        definitions
+    }
+
     fn statements_with_claims(&self) -> usize {
         self.mismatches.len() + self.sheet.relations.len() + self.sheet.requirements.len() + self.sheet.answers.len()
     }
 
     /// The declared units that a mismatch hangs on: of the numbers and quantities in it, and of what an inferred quantity is made of.
-    fn suspects(&self, mismatch: &Mismatch) -> Vec<Suspect> {
+    fn suspects(&self, mismatch: &Mismatch, definitions: &[Option<ExprId>]) -> Vec<Suspect> {
         let mut open: Vec<ExprId> = Vec::new();
         let mut found: Vec<Suspect> = Vec::new();
         let mut quantities: Vec<QuantityId> = Vec::new();
@@ -235,10 +258,7 @@ impl Reader<'_> {
             let Some(id) = quantities.get(seen).copied() else { return found };
             seen += 1;
             if self.inferred.binary_search(&id).is_ok() {
-                open.extend(self.sheet.relations.iter().filter_map(|relation| {
-                    let defines = relation.origin == RelationOrigin::Let && self.sheet.exprs.get(relation.left) == Expr::Quantity(id);
-                    defines.then_some(relation.right)
-                }));
+                open.extend(definitions[id.0 as usize]);
             } else if matches!(self.sheet.quantity(id).origin, Origin::Given | Origin::Let | Origin::Unknown) {
                 found.push(Suspect::Quantity(id));
             }
@@ -248,6 +268,7 @@ impl Reader<'_> {
     /// What the statements of the sheet say where one unit may be any.
     fn trial(&self, free: Option<Suspect>, of: Option<Dimension>) -> Trial {
         let n_quantities = self.sheet.quantities.len();
+        self.statements_left.set(self.statements_left.get().saturating_sub(self.statements_with_claims()));
         let mut undetermined = self.undetermined.clone();
         for id in &self.inferred {
             undetermined[id.0 as usize] = true;
@@ -397,10 +418,10 @@ impl Reader<'_> {
     }
 
     /// Adds to every mismatch that is left the units that look like the right one, where they are one or two.
-    fn offer_cures(&mut self) {
+    fn offer_cures(&mut self, definitions: &[Option<ExprId>]) {
         for at in 0..self.mismatches.len() {
             let mismatch = self.mismatches[at].clone();
-            let suspects = self.suspects(&mismatch);
+            let suspects = self.suspects(&mismatch, definitions);
             let mut cures: Vec<(UnitText, String, String)> = Vec::new();
             for cure in self.cures(&suspects).into_iter().filter(|cure| cure.cured[at]) {
                 let (unit, owner) = match cure.suspect {
