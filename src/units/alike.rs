@@ -7,12 +7,10 @@ use super::{Dimension, parse, quantities};
 enum Slip {
     /// Another power: `mm2` for `mm3`, `m` for `m3`.
     Power,
-    /// A part that is left out or too many: `kJ` for `kJ/kg`, `L/min` for `L`.
+    /// A part that is left out or too many, or one letter: `kJ` for `kJ/kg`, `L/min` for `L`, `kJ` for `kW`.
     Part,
     /// Upside down: `kg/m3` for `m3/kg`, `h` for `1/h`.
     Reciprocal,
-    /// One letter: `kJ` for `kW`.
-    Letter,
 }
 
 /// The units of `dimension` for which `written` is easily written, by the likeliest slip.
@@ -58,11 +56,17 @@ fn slip(written: &str, meant: &str) -> Option<Slip> {
         Some(Slip::Part)
     } else if over(written) == meant {
         Some(Slip::Reciprocal)
-    } else if written.chars().count() > 1 && meant.chars().count() > 1 && strsim::damerau_levenshtein(written, meant) == 1 {
-        Some(Slip::Letter)
+    } else if written.chars().count() > 1 && strsim::damerau_levenshtein(written, meant) == 1 && differ_by_time(written, meant) {
+        Some(Slip::Part)
     } else {
         None
     }
+}
+
+/// Of units that differ by a letter only an energy and a power (`kJ`, `kW`) are taken for each other; others are alike by chance.
+fn differ_by_time(written: &str, meant: &str) -> bool {
+    let (Ok(written), Ok(meant)) = (parse(written), parse(meant)) else { return false };
+    written.dimension.per(meant.dimension) == Some(Dimension::TIME) || meant.dimension.per(written.dimension) == Some(Dimension::TIME)
 }
 
 #[cfg(test)]
