@@ -43,7 +43,7 @@ pub fn parse(text: &str) -> Result<Unit, UnitError> {
     let unit = product.into_unit();
     if let Some((pressure, basis)) = misspelling::basis_as_factor(&unit.name) {
         let help = Some(format!("write `{pressure} {basis}`"));
-        let cure = Some(Cure { unit: pressure, basis: Some(basis), certain: true });
+        let cure = Some(Box::new(Cure { unit: pressure, basis: Some(basis), certain: true }));
         let kind = UnitErrorKind::Unknown { word: text.to_owned(), near: Vec::new(), help, cure };
         return Err(UnitError { offset: 0, len: text.len(), kind });
     }
@@ -166,7 +166,7 @@ impl Reader<'_> {
         let Suggestion { near, help, cure } = misspelling::suggest(word);
         // A basis stands behind the whole unit: within a compound it cures nothing.
         let whole = start == 0 && self.at == self.text.len();
-        let cure = cure.filter(|cure| cure.basis.is_none() || whole);
+        let cure = cure.filter(|cure| cure.basis.is_none() || whole).map(Box::new);
         self.error(start, UnitErrorKind::Unknown { word: self.text[start..self.at].to_owned(), near, help, cure })
     }
 

@@ -26,7 +26,7 @@ pub enum UnitErrorKind {
         /// What to write instead, where the word is a known habit: a short sentence.
         help: Option<String>,
         /// The unit that the word stands for, where it is a known habit.
-        cure: Option<Cure>,
+        cure: Option<Box<Cure>>,
     },
     /// A power, alone or together with others, beyond the limit of powers or the range of numbers.
     Power {
