@@ -294,7 +294,7 @@ impl Reader<'_> {
         let id = self.gas_constant(gas, field);
         if id.is_none() {
             let offers = if matches!(self.sheet.gas(gas).model, GasModel::HumidAir(_)) {
-                "no constants: they change with its moisture"
+                "nothing here: `M` and `R` of humid air change with its moisture"
             } else {
                 "`M` and `R`; its critical point is not known here"
             };

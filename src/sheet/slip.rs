@@ -7,7 +7,7 @@ use crate::units::{self, Dimension};
 
 use super::reader::Reader;
 use super::value::folded;
-use super::{Constant, Expr, ExprId, Kind, Origin, QuantityId, RelationOrigin, TypedNumber};
+use super::{Constant, Expr, ExprId, Kind, Origin, Quantity, QuantityId, RelationOrigin, TypedNumber};
 
 /// A constant given by hand may differ from that of the species by this much before it is told: the spread of published
 /// molar masses of one gas.
@@ -49,6 +49,13 @@ const USUAL: [Usual; 12] = [
 const USUAL_ABSOLUTE: Usual = usual(Dimension::PRESSURE, 1.5e3, 1e8, "absolute pressure", "15 mbar to 1000 bar");
 const USUAL_GAUGE: Usual = usual(Dimension::PRESSURE, 1.5e3, 1e8, "gauge pressure", "15 mbar to 1000 bar");
 const USUAL_DIFFERENCE: Usual = usual(Dimension::PRESSURE, 0.1, 1e8, "pressure difference", "0.1 Pa to 1000 bar");
+
+/// A name without underscores, its first letter as it is, since that is the symbol (`t_e` is no `T_e`), the others small.
+fn folded_name(name: &str) -> impl Iterator<Item = char> {
+    let mut letters = name.chars().filter(|letter| *letter != '_');
+    let symbol = letters.next();
+    symbol.into_iter().chain(letters.flat_map(char::to_lowercase))
+}
 
 impl Reader<'_> {
     /// Looks for slips. Called when everything else is settled.
@@ -187,28 +194,22 @@ impl Reader<'_> {
 
     /// Names that differ only in underscores or, behind their symbol, in case: `T_e` and `Te`, `Te` and `TE`.
     fn twins(&mut self) {
-        let mut folded_names: Vec<(String, QuantityId)> = self
-            .sheet
-            .quantities
-            .iter()
-            .enumerate()
-            .filter(|(_, quantity)| matches!(quantity.origin, Origin::Given | Origin::Unknown | Origin::Let))
-            .map(|(at, quantity)| {
-                // The first letter is the symbol: `t_e` is no `T_e`.
-                let name = quantity.name.replace('_', "");
-                let symbol = name.chars().next().map_or(0, char::len_utf8);
-                let folded = format!("{}{}", &name[..symbol], name[symbol..].to_lowercase());
-                (folded, QuantityId(at as u32))
-            })
-            .collect();
-        folded_names.sort();
-        for pair in folded_names.windows(2) {
-            let [(first, a), (second, b)] = pair else { continue };
-            if first == second && self.are_twins(*a, *b) {
-                let (a, b) = (self.sheet.quantity(*a), self.sheet.quantity(*b));
-                let finding = code::twin_names::finding(b.span, &b.name, &a.name, a.span);
-                self.report(finding);
+        let declared = |quantity: &Quantity| matches!(quantity.origin, Origin::Given | Origin::Unknown | Origin::Let);
+        let mut names: Vec<QuantityId> =
+            (0..self.sheet.quantities.len() as u32).map(QuantityId).filter(|id| declared(self.sheet.quantity(*id))).collect();
+        let folded = |id: &QuantityId| folded_name(&self.sheet.quantity(*id).name);
+        names.sort_by(|a, b| folded(a).cmp(folded(b)).then(a.cmp(b)));
+        let mut twins = Vec::new();
+        for pair in names.windows(2) {
+            let [a, b] = pair else { continue };
+            if folded(a).eq(folded(b)) && self.are_twins(*a, *b) {
+                twins.push((*a, *b));
             }
+        }
+        for (a, b) in twins {
+            let (a, b) = (self.sheet.quantity(a), self.sheet.quantity(b));
+            let finding = code::twin_names::finding(b.span, &b.name, &a.name, a.span);
+            self.report(finding);
         }
     }
 

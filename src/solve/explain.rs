@@ -70,7 +70,8 @@ pub(super) fn missing(sheet: &Sheet, part: &Part, quantities: &[QuantityId], rel
         };
         let needs = sheet.gas(entry.gas).degrees_of_freedom();
         let taken: Vec<Property> = entry.at.iter().map(|(property, _)| *property).collect();
-        let thermal = [Property::T, Property::H, Property::U].iter().any(|property| taken.contains(property));
+        let ideal = sheet.gas(entry.gas).model.is_ideal();
+        let thermal = ideal && [Property::T, Property::H, Property::U].iter().any(|property| taken.contains(property));
         let is_moist = taken.iter().any(|property| property.is_moisture());
         let moisture = [Property::RelativeHumidity, Property::DewPoint, Property::HumidityRatio];
         let moisture = moisture.into_iter().filter(|_| needs == 3 && !is_moist);
