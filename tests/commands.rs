@@ -495,6 +495,9 @@ fn gases_units_and_codes_are_listed_one_a_line_and_shown() {
     let gases = folder.run(&["gases"]).results;
     assert!(gases.lines().count() >= 60 && gases.contains("dry air") && gases.contains("R134a"), "{gases}");
     assert!(folder.run(&["gases", "carbon", "dioxide"]).results.contains("44.009"));
+    let far = folder.run(&["gases", "nitrogen", "--temperature", "-10degC", "--limit", "0.5%"]).results;
+    assert!(far.contains("ideal gas law at -10 degC (263.15 K), error in density within 0.5 %"), "{far}");
+    assert!(folder.run(&["gases", "humid", "air"]).results.contains("CIPM-2007"));
     let units = folder.run(&["units"]).results;
     assert!(units.lines().count() >= 30 && units.contains("pressure"), "{units}");
     let pressure = folder.run(&["units", "pressure"]).results;

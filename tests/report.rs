@@ -50,6 +50,28 @@ require a >= 40.0 kg/h and b >= 20.0 kg/h "Enough for both halls"
 answer a, b, x, n
 "#;
 
+/// The same argon ideal and real, humid air, a saturation pressure, a viscosity: what a report says of models.
+const MODELS: &str = r#"
+gas ar_i = argon
+gas ar   = argon, real
+gas co2  = carbon dioxide
+gas air  = humid air
+given p = 200 bar abs "Cylinder" from "PI-1"
+given T = 20.0 degC "Yard" from "TI-1"
+given RH = 60.0 % "Yard" from "MI-1"
+given p_y = 1.013 bar abs "Yard" from "Barometer"
+state ideal of ar_i at p = p, T = T "As an ideal gas"
+state low   of ar_i at p = p_y, T = T "Let down"
+state full  of ar   at p = p, T = T "As it is"
+state yard  of air  at p = p_y, T = T, RH = RH "Air of the yard"
+let eta = full.mu in uPa.s "Viscosity"
+let w   = ideal.w in m/s "Speed of sound"
+let h   = full.h - low.h in kJ/kg "Enthalpy"
+let m   = ar.M in g/mol "Molar mass"
+let p_l = co2.p_sat(T) in bar abs "Over the liquid"
+answer ideal.rho, full.rho, yard.rho, eta, w, h, m, p_l, yard.T_dew
+"#;
+
 fn with<T>(text: &str, make: impl FnOnce(&Input) -> T) -> T {
     let Solved { tree, sheet, solution, findings, .. } = &gaswright::solve(text);
     make(&Input { path: "sheet.gw", text, tree, sheet, solution: solution.as_ref(), findings })
@@ -180,7 +202,7 @@ fn a_page_stands_on_its_own() {
 
 #[test]
 fn every_link_leads_somewhere() {
-    for text in [BUFFER, BLOCK] {
+    for text in [BUFFER, BLOCK, MODELS] {
         let html = rendered(text, Format::Html);
         let mut links = 0;
         for link in html.split("href=\"#").skip(1) {
@@ -242,7 +264,9 @@ fn results_follow_the_schema() {
     let schema: Value = serde_json::from_str(SCHEMA).expect("the schema is JSON");
     let validator = jsonschema::draft202012::new(&schema).expect("the schema is a schema");
     let broken = "given V = 3.20 m3\nlet m = V * rho\ngiben x = 2\nanswer m\n";
-    for (text, status) in [(BUFFER, "solved"), (BLOCK, "solved"), (MARKUP, "solved"), (broken, "failed"), ("", "solved")] {
+    for (text, status) in
+        [(BUFFER, "solved"), (MODELS, "solved"), (BLOCK, "solved"), (MARKUP, "solved"), (broken, "failed"), ("", "solved")]
+    {
         let object = with(text, |input| serde_json::to_value(result(input)).expect("the result is JSON"));
         let errors: Vec<String> = validator.iter_errors(&object).map(|error| format!("{error} at {}", error.instance_path())).collect();
         assert!(errors.is_empty(), "{errors:#?}");
@@ -305,6 +329,65 @@ fn the_result_holds_values_in_their_units_and_in_si() {
     assert_eq!(object["requirements"][0]["met"], true);
     assert_eq!(object["assumptions"][0]["verdict"], "for judgement");
     assert_eq!(object["cautions"][0]["shown"], true);
+}
+
+/// The error that the verdict tells is that of the ideal state beside the real one of the same sheet.
+#[test]
+fn the_result_tells_models_and_errors() {
+    let object = with(MODELS, |input| serde_json::to_value(result(input)).expect("JSON"));
+    let state = |name: &str| {
+        object["states"].as_array().and_then(|all| all.iter().find(|one| one["name"] == name)).cloned().expect("the state is there")
+    };
+    let (ideal, low, full, yard) = (state("ideal"), state("low"), state("full"), state("yard"));
+    let number = |value: &Value| value.as_f64().expect("a number");
+    let error = 100.0 * (number(&ideal["properties"]["rho"]) / number(&full["properties"]["rho"]) - 1.0);
+    let errors = &ideal["ideal_errors"];
+    // The two molar masses and gas constants differ by some parts in a million.
+    assert!((number(&errors["density_percent"]) - error).abs() < 0.01, "{errors} {error}");
+    assert_eq!((&ideal["ideal_error_percent"], &ideal["verdict"]), (&errors["density_percent"], &"failed".into()));
+    assert!(number(&errors["w_percent"]) < -5.0 && number(&errors["h_difference"]) > 0.0, "{errors}");
+    assert_eq!((&errors["judge"], &errors["limit_percent"]), (&"reference equation of state".into(), &1.0.into()));
+    assert!(errors["judge_source"].as_str().is_some_and(|source| source.starts_with("Tegeler")), "{errors}");
+    assert_eq!((&low["verdict"], &low["model_kind"]), (&"confirmed".into(), &"ideal gas law".into()));
+    assert_eq!((&full["model"], &full["model_kind"]), (&"real".into(), &"reference equation of state".into()));
+    assert_eq!((&full["ideal_errors"], &full["verdict"], &full["extrapolated"]), (&Value::Null, &Value::Null, &false.into()));
+    assert_eq!((&yard["gas"], &yard["model_kind"]), (&"humid air".into(), &"CIPM-2007".into()));
+}
+
+#[test]
+fn a_report_says_by_what_each_gas_was_calculated() {
+    let html = rendered(MODELS, Format::Html);
+    // Failed and confirmed have marks of their own, and the line of the limit is drawn.
+    assert!(html.contains("<polygon") && html.contains("<circle") && html.contains("<polyline"));
+    let words = words(&html).replace(['\u{a0}', '\u{202f}'], " ");
+    assert_in_order(
+        &words,
+        &[
+            "Argon is an ideal gas",
+            "FAILED",
+            "that of the reference equation of state: Tegeler",
+            "largest error of the ideal law, by the reference equation of state: in density",
+            "in speed of sound",
+            "common practice:",
+            "Error of the ideal gas law for argon",
+            "Judged by the reference equation of state: Tegeler",
+            "Density, speed of sound decide",
+            "Rules of common practice, no source",
+            "first reaches 1 %",
+            "State full by the reference equation of state for argon (source under States)",
+            "Saturation of carbon dioxide by its reference equation of state (Span, Wagner 1996",
+            "Model of argon: ideal gas.",
+            "zero for the ideal gas at 298.15 K and 100 kPa",
+            "Model of argon: reference equation of state (Tegeler",
+            "published for 83.806 K to 700 K, up to 1 000 MPa",
+            "stated uncertainty: density 0.02 % up to 12 MPa",
+            "Gas constant and molar mass are its own",
+            "zero for the ideal gas at 298.15 K and 100 kPa",
+            "No ideal-gas assumption. Reduced pressure and temperature: full 4.11 and 1.95.",
+            "Viscosity by the correlation of",
+            "Density at yard by CIPM-2007",
+        ],
+    );
 }
 
 #[test]

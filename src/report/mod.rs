@@ -23,6 +23,7 @@ mod draft;
 mod formula;
 mod input;
 mod markdown;
+mod model;
 mod object;
 mod page;
 mod part;
@@ -36,9 +37,9 @@ mod written;
 
 pub use input::Input;
 pub use object::{
-    AnswerObject, AssumptionObject, CautionObject, ChecksObject, ContributionObject, CorrelationObject, MonteCarloObject, QuantityObject,
-    RequirementObject, ResultObject, RulesObject, SCHEMA, SheetObject, StateObject, StepObject, SurplusObject, ToolObject,
-    UncertaintyObject,
+    AnswerObject, AssumptionObject, CautionObject, ChecksObject, ContributionObject, CorrelationObject, IdealErrorsObject,
+    MonteCarloObject, QuantityObject, RequirementObject, ResultObject, RulesObject, SCHEMA, SheetObject, StateObject, StepObject,
+    SurplusObject, ToolObject, UncertaintyObject,
 };
 pub use render::{Format, report};
 pub use result::result;

@@ -176,14 +176,45 @@ pub struct StateObject {
     pub model: &'static str,
     /// Its line.
     pub line: u32,
+    /// Kind of the model: `ideal gas law`, `reference equation of state`, `GERG-2008`, `Peng-Robinson equation`, `CIPM-2007`, `virial coefficients`.
+    pub model_kind: &'static str,
+    /// Publication of the model; of an ideal gas that of its heat capacity, `null` where the state uses none.
+    pub model_source: Option<String>,
+    /// Whether the state lies beyond the published range of its model; `null` where the sheet has no solution.
+    pub extrapolated: Option<bool>,
     /// Error of the ideal law in density in percent, where a reference equation tells it.
     pub ideal_error_percent: Option<f64>,
+    /// The errors of the ideal law in all that the state may use, where a reference equation tells them.
+    pub ideal_errors: Option<IdealErrorsObject>,
     /// The verdict on the ideal law; `null` where the sheet has no solution.
     pub verdict: Option<&'static str>,
     /// What the rules of thumb say; `null` where the sheet has no solution.
     pub rules: Option<RulesObject>,
     /// The properties of the system of relations in SI, by field.
     pub properties: serde_json::Map<String, serde_json::Value>,
+}
+
+/// The errors of the ideal law at a state, ideal less real at the same pressure and temperature; `null` where it has none.
+#[derive(Clone, Debug, Serialize)]
+pub struct IdealErrorsObject {
+    /// 100 (rho_ideal/rho - 1).
+    pub density_percent: f64,
+    /// 100 (cp_ideal/cp - 1).
+    pub cp_percent: Option<f64>,
+    /// 100 (w_ideal/w - 1).
+    pub w_percent: Option<f64>,
+    /// h_ideal - h in J/kg.
+    pub h_difference: Option<f64>,
+    /// s_ideal - s in J/(kg K).
+    pub s_difference: Option<f64>,
+    /// Kind of the model that judges.
+    pub judge: &'static str,
+    /// Its publication.
+    pub judge_source: String,
+    /// Whether the state lies beyond the published range of that model.
+    pub extrapolated: bool,
+    /// The limit of the sheet in percent.
+    pub limit_percent: f64,
 }
 
 /// The rules of thumb: `a` is p < p_c/3 with T > 2 T_c, `b` is p < 0.01 p_c; `null` where the critical point is unknown.

@@ -3,13 +3,15 @@
 use super::verdict::interval_unit;
 use crate::diagnostic::LineIndex;
 use crate::diagnostic::json::FindingObject;
-use crate::sheet::{Origin, Quantity, QuantityId, Reading, StateId, write_expr};
+use crate::gas::verdict::{IdealError, Judge};
+use crate::sheet::{GasId, Origin, Quantity, QuantityId, Reading, StateId, write_expr};
 use crate::solve::{Method, Solution, Step};
 use crate::syntax::Shape;
 
+use super::model::judge_source;
 use super::object::{
-    AnswerObject, AssumptionObject, CautionObject, ChecksObject, CorrelationObject, QuantityObject, RequirementObject, ResultObject,
-    RulesObject, SheetObject, StateObject, StepObject, SurplusObject, ToolObject, UncertaintyObject,
+    AnswerObject, AssumptionObject, CautionObject, ChecksObject, CorrelationObject, IdealErrorsObject, QuantityObject, RequirementObject,
+    ResultObject, RulesObject, SheetObject, StateObject, StepObject, SurplusObject, ToolObject, UncertaintyObject,
 };
 use super::{Input, answer_text};
 
@@ -125,15 +127,20 @@ impl Maker<'_> {
             .map(|(at, state)| {
                 let gas = sheet.gas(state.gas);
                 let verdict = verdict_of(StateId(at as u32));
+                let by = self.input.state_model(StateId(at as u32));
                 let properties = state.properties.iter().map(|(property, id)| {
                     let value = self.input.si(*id).map_or(serde_json::Value::Null, serde_json::Value::from);
                     (property.row().field.to_owned(), value)
                 });
                 StateObject {
                     name: state.name.clone(),
-                    gas: gas.gas.title(),
+                    gas: self.input.gas_title(state.gas),
                     model: gas.model.word(),
                     line: self.input.line(self.lines, state.statement),
+                    model_kind: by.kind,
+                    model_source: by.source,
+                    extrapolated: by.extrapolated,
+                    ideal_errors: verdict.and_then(|verdict| verdict.errors).map(|errors| self.ideal_errors(state.gas, &errors)),
                     ideal_error_percent: verdict.and_then(|verdict| verdict.ideal_error_percent),
                     verdict: verdict.map(|verdict| verdict.verdict.word()),
                     rules: verdict.map(|verdict| RulesObject { a: verdict.rule_a, b: verdict.rule_b }),
@@ -141,6 +148,22 @@ impl Maker<'_> {
                 }
             })
             .collect()
+    }
+
+    fn ideal_errors(&self, gas: GasId, errors: &IdealError) -> IdealErrorsObject {
+        let number = |value: f64| Some(value).filter(|value| value.is_finite());
+        let judge = Judge::of(&self.input.sheet.gas(gas).gas);
+        IdealErrorsObject {
+            density_percent: errors.density_percent,
+            cp_percent: number(errors.cp_percent),
+            w_percent: number(errors.w_percent),
+            h_difference: number(errors.h_j_kg),
+            s_difference: number(errors.s_j_kg_k),
+            judge: errors.judge.words(),
+            judge_source: judge.as_ref().map_or_else(String::new, |judge| judge_source(judge).to_owned()),
+            extrapolated: errors.is_extrapolated,
+            limit_percent: self.input.ideal_limit_percent(),
+        }
     }
 
     fn requirements(&self) -> Vec<RequirementObject> {

@@ -74,7 +74,9 @@ fn assumptions(input: &Input, lines: &LineIndex) -> Vec<Row> {
         let verdict = input.state_verdict(StateId(at as u32))?;
         let title = input.sheet.gas(state.gas).gas.title();
         let about = format!("{title} is an ideal gas at state {} (line {})", state.name, input.line(lines, state.statement));
-        Some(Row { word: word_of(verdict.verdict).to_owned(), about, value: String::new() })
+        let error = |percent: f64| format!("{} % in density", write_figures(percent, 2));
+        let value = verdict.ideal_error_percent.map_or_else(String::new, error);
+        Some(Row { word: word_of(verdict.verdict).to_owned(), about, value })
     });
     let clauses = input.sheet.assumptions.iter().enumerate().filter_map(|(at, clause)| {
         let about = format!("{} (line {})", clause.text, input.line(lines, clause.statement));

@@ -64,10 +64,16 @@ pub(super) fn one_property(sheet: &GoodSheet) -> Vec<Mutant> {
     mutants
 }
 
-/// Enthalpy and temperature of an ideal gas, which do not count as two.
+/// Whether a state is of an ideal gas.
+fn is_ideal(sheet: &GoodSheet, name: &str) -> bool {
+    let read = &sheet.solved.sheet;
+    read.states.iter().any(|state| state.name == name && read.gas(state.gas).model.is_ideal())
+}
+
+/// Enthalpy and temperature of an ideal gas, which do not count as two. Of a real gas they do.
 pub(super) fn dependent_properties(sheet: &GoodSheet) -> Vec<Mutant> {
     let mut mutants = Vec::new();
-    for (statement, name, at) in states(sheet) {
+    for (statement, name, at) in states(sheet).into_iter().filter(|(_, name, _)| is_ideal(sheet, name)) {
         let Some((property, id)) = at.iter().find(|(property, _)| sheet.name_of(*property) == "p").filter(|_| has(sheet, at, "T")) else {
             continue;
         };

@@ -53,10 +53,11 @@ fn molar_masses_agree_within_the_uncertainty_of_the_atomic_weights() {
 }
 
 /// Critical temperature: within 0.2 % of an evaluated series but for the gases named, whose sources are known to disagree by so much; cyclohexane
-/// is left out, since the series by way of its library has the values of methylcyclopentane for it.
+/// is left out, since the series by way of its library has the values of methylcyclopentane for it. Of n-decane it has 611.7 K, six kelvin
+/// below every other source.
 #[test]
 fn critical_temperatures_agree_with_evaluated_series() {
-    let known = [("propadiene", 0.0102), ("carbonyl sulfide", 0.0100), ("vinyl chloride", 0.0095)];
+    let known = [("propadiene", 0.0102), ("carbonyl sulfide", 0.0100), ("vinyl chloride", 0.0095), ("n-decane", 0.0098)];
     let mut compared = 0;
     for (name, [_, t_c, ..]) in other_sources() {
         let Named::Species(one) = find(name).unwrap() else { unreachable!() };

@@ -14,3 +14,4 @@ pub(super) mod tidy;
 pub(super) mod units;
 
 mod argument;
+mod gas_page;

@@ -10,18 +10,17 @@ pub(crate) const PAGE: &str = r##"
 # A part of the language that this version does not offer
 
 The line is right as the language goes, but this version cannot calculate what it asks for, and it does not put something else
-in its place. Reading `, real` and then using the ideal law would print a density under a false name; at 200 bar it would be
-off by several percent. So the sheet has no result until the line asks for something that is there.
+in its place: a number under a false name would look like a result. So the sheet has no result until the line asks for something
+that is there. Humid air, for one, has a single model, in which its density is not that of the ideal law.
 
 ```gw
-gas n2 = nitrogen, real
+gas air = humid air, ideal
 ```
 
-Follow the help of the finding. A gas without `, real` is ideal, and each of its states is judged by the rules of thumb; a
-property that is not offered can be a `given` with its source.
+Follow the help of the finding. Dry air may be ideal, and each of its states is then judged.
 
 ```gw cured
-gas n2 = nitrogen
+gas air = dry air, ideal
 ```
 "##;
 

@@ -1,6 +1,6 @@
 //! The formula: one tree from which MathML and LaTeX are written.
 
-use crate::sheet::{Condition, Constant, Expr, ExprId, GasFunction, Property, QuantityId, Relation};
+use crate::sheet::{Condition, Constant, Expr, ExprId, GasFunction, QuantityId, Relation};
 use crate::syntax::{BinaryOp, Comparison, Function};
 use crate::units::constants::STANDARD_STATE_PRESSURE;
 use crate::units::{Rational, write_figures};
@@ -114,14 +114,8 @@ impl Draft<'_> {
                 Formula::Application(gas_function(function, &self.input.sheet.gas(gas).name), vec![self.formula(a, put)])
             }
             Expr::State(function, gas, arguments) => {
-                let name = match function.of {
-                    Property::Cp => "c_p",
-                    Property::Cv => "c_v",
-                    other => other.row().field,
-                };
-                let mut symbol = Symbol::of_name(name);
-                let gas = &self.input.sheet.gas(gas).name;
-                symbol.subscripts.push(Subscript { text: gas.replace('_', " "), italic: false });
+                // As a property of a state reads, with the name of the gas in place of that of the state.
+                let symbol = Symbol::of_name(&format!("{}.{}", self.input.sheet.gas(gas).name, function.of.row().field));
                 let arguments = function.arguments().zip(arguments).map(|(_, argument)| self.formula(argument, put)).collect();
                 Formula::Application(symbol, arguments)
             }
@@ -256,7 +250,7 @@ fn unwritten(value: f64) -> Formula {
 }
 
 fn gas_function(function: GasFunction, gas: &str) -> Symbol {
-    let (base, italic) = match function {
+    let (base, below) = match function {
         GasFunction::HeatCapacity => ("c", Some("p")),
         GasFunction::TemperatureOfEnthalpy => ("T", Some("h")),
         GasFunction::TemperatureOfEntropy => ("T", Some("s")),
@@ -267,7 +261,8 @@ fn gas_function(function: GasFunction, gas: &str) -> Symbol {
         GasFunction::SaturationPressure => ("p", Some("sat")),
         GasFunction::SaturationTemperature => ("T", Some("sat")),
     };
-    let own = italic.map(|text| Subscript { text: text.to_owned(), italic: true });
+    // A letter is the symbol of a quantity, a word is none.
+    let own = below.map(|text| Subscript { text: text.to_owned(), italic: text.len() == 1 });
     let gas = Subscript { text: gas.replace('_', " "), italic: false };
     Symbol { delta: false, base: base.to_owned(), subscripts: own.into_iter().chain([gas]).collect() }
 }

@@ -4,6 +4,7 @@ use std::fmt::Write;
 
 use crate::report::formula::escape;
 use crate::report::typeset::raised;
+use crate::solve::Verdict;
 use crate::units::math;
 
 /// A figure of one gas.
@@ -13,6 +14,11 @@ pub(in crate::report) struct Plane {
     pub(in crate::report) gas: String,
     /// Its states.
     pub(in crate::report) points: Vec<Point>,
+    /// Along which the error of the ideal law first reaches the limit: reduced pressure and temperature, temperature rising. Empty
+    /// where nothing tells it.
+    pub(in crate::report) line: Vec<(f64, f64)>,
+    /// The limit with its sign of percent.
+    pub(in crate::report) limit: String,
 }
 
 /// A state in the reduced plane.
@@ -24,6 +30,8 @@ pub(in crate::report) struct Point {
     pub(in crate::report) p_r: f64,
     /// Temperature over critical temperature, above zero.
     pub(in crate::report) t_r: f64,
+    /// The verdict on the ideal law, which its mark shows.
+    pub(in crate::report) verdict: Verdict,
 }
 
 // The drawing in units of which a column of a phone shows about as many as it has pixels, so that its text keeps its size.
@@ -44,6 +52,12 @@ const CHARACTER: f64 = 6.4;
 const RULE_A: (f64, f64) = (1.0 / 3.0, 2.0);
 /// Reduced pressure below which rule b holds.
 const RULE_B: f64 = 0.01;
+
+/// Steps of temperature from which on the line of the limit has a gap.
+const GAP_IN_TEMPERATURE: f64 = 1.5;
+
+/// Ratio of neighbouring pressures from which on it has one.
+const GAP_IN_PRESSURE: f64 = 1.6;
 
 /// The axes: where a reduced pressure and a reduced temperature stand.
 struct Axes {
@@ -70,6 +84,11 @@ impl Axes {
             return Self { p_low, p_high, t_low: decade(t_low, false).min(0.5), t_high: decade(t_high, true), t_logarithmic: true };
         }
         Self { p_low, p_high, t_low: (t_low * 2.0).floor() / 2.0, t_high: t_high.ceil(), t_logarithmic: false }
+    }
+
+    /// Whether a reduced pressure and temperature lie within the axes.
+    fn shows(&self, (p_r, t_r): (f64, f64)) -> bool {
+        (self.p_low..=self.p_high).contains(&p_r) && (self.t_low..=self.t_high).contains(&t_r)
     }
 
     fn x(&self, p_r: f64) -> f64 {
@@ -133,14 +152,61 @@ impl Plane {
         escape(&self.gas, &mut out);
         out.push_str(": where rules of thumb allow the ideal gas law, and the states of this sheet</title>");
         push_zones(&axes, number, &mut out);
+        let runs = self.runs(&axes);
+        push_runs(&runs, &mut out);
         push_axes(&axes, &mut out);
-        self.push_points(&axes, &mut out);
+        self.push_points(&axes, &runs, &mut out);
         out.push_str("</svg>");
         out
     }
 
+    /// The line of the limit on the drawing: runs of points without a gap, within the axes.
+    ///
+    /// A gap is where temperatures are missing, or where the pressure jumps: near the Boyle temperature the error falls, turns and
+    /// rises, and which of its sides reaches the limit first changes at once.
+    fn runs(&self, axes: &Axes) -> Vec<Vec<(f64, f64)>> {
+        let steps = self.line.windows(2).map(|pair| math::ln(pair[1].1 / pair[0].1));
+        let step = steps.fold(f64::INFINITY, f64::min);
+        let mut runs: Vec<Vec<(f64, f64)>> = Vec::new();
+        let mut last: Option<(f64, f64)> = None;
+        for point in &self.line {
+            let inside = axes.shows(*point);
+            let follows = last.is_some_and(|(p_r, t_r)| {
+                math::ln(point.1 / t_r) < GAP_IN_TEMPERATURE * step && math::ln(point.0 / p_r).abs() < math::ln(GAP_IN_PRESSURE)
+            });
+            if inside {
+                let place = (axes.x(point.0), axes.y(point.1));
+                match runs.last_mut().filter(|_| follows) {
+                    Some(run) => run.push(place),
+                    None => runs.push(vec![place]),
+                }
+            }
+            last = inside.then_some(*point);
+        }
+        runs.retain(|run| run.len() > 1);
+        runs
+    }
+
+    /// Where the label of the line stands: beside it, free of what is there already.
+    fn line_label(&self, runs: &[Vec<(f64, f64)>], taken: &[Area]) -> Option<Area> {
+        let width = CHARACTER * self.limit.chars().count() as f64;
+        let height = TEXT + 1.0;
+        let longest = runs.iter().max_by(|a, b| span(a).total_cmp(&span(b)))?;
+        let beside = |(x, y): (f64, f64), right: bool| {
+            let left = if right { x + 3.0 } else { x - 3.0 - width };
+            Area { left, right: left + width, top: y - height / 2.0, bottom: y + height / 2.0 }
+        };
+        // From the middle of the line outwards, so that the label stands well within the drawing.
+        let middle = longest.len() / 2;
+        let mut order: Vec<usize> = (0..longest.len()).collect();
+        order.sort_by_key(|at| at.abs_diff(middle));
+        let on_the_line = |area: &Area| longest.iter().any(|(x, y)| area.left < *x && *x < area.right && area.top < *y && *y < area.bottom);
+        let free = |area: &Area| area.is_inside() && !on_the_line(area) && !taken.iter().any(|other| other.covers(area));
+        order.into_iter().flat_map(|at| [beside(longest[at], true), beside(longest[at], false)]).find(free)
+    }
+
     /// The marks of the states and their names, placed so that none covers another.
-    fn push_points(&self, axes: &Axes, out: &mut String) {
+    fn push_points(&self, axes: &Axes, runs: &[Vec<(f64, f64)>], out: &mut String) {
         let places: Vec<(f64, f64)> = self.points.iter().map(|point| (axes.x(point.p_r), axes.y(point.t_r))).collect();
         let mut taken: Vec<Area> = places
             .iter()
@@ -150,6 +216,12 @@ impl Plane {
             |(x, y, _): (f64, f64, &str)| Area { left: x - 3.0 * CHARACTER, right: x + 3.0 * CHARACTER, top: y - TEXT, bottom: y + 3.0 };
         taken.extend(zone_labels(axes).map(label));
         let mut names = String::new();
+        if let Some(area) = self.line_label(runs, &taken) {
+            let _ = write!(names, r#"<text class="halo" x="{:.1}" y="{:.1}">"#, area.left, area.bottom - 3.5);
+            escape(&self.limit, &mut names);
+            names.push_str("</text>");
+            taken.push(area);
+        }
         for (label, at) in merged(&self.points, &places) {
             let (x, y) = places[at];
             let (area, far) = Area::beside(x, y, CHARACTER * label.chars().count() as f64, &taken);
@@ -169,11 +241,47 @@ impl Plane {
             names.push_str("</text>");
             taken.push(area);
         }
-        for (x, y) in &places {
-            let _ = write!(out, r##"<circle cx="{x:.1}" cy="{y:.1}" r="{RADIUS}" fill="#fff" stroke="#000" stroke-width="1.6"/>"##);
+        for ((x, y), point) in places.iter().zip(&self.points) {
+            push_mark(*x, *y, point.verdict, out);
         }
         out.push_str(&names);
     }
+}
+
+/// The mark of a state: its shape and its filling tell the verdict, with no colour.
+fn push_mark(x: f64, y: f64, verdict: Verdict, out: &mut String) {
+    let _ = match verdict {
+        Verdict::Confirmed => {
+            write!(out, r##"<circle cx="{x:.1}" cy="{y:.1}" r="{RADIUS}" fill="#fff" stroke="#000" stroke-width="1.6"/>"##)
+        }
+        Verdict::Failed => {
+            let r = RADIUS + 1.2;
+            let corners = [(x, y - r), (x + r, y), (x, y + r), (x - r, y)].map(|(x, y)| format!("{x:.1},{y:.1}")).join(" ");
+            write!(out, r##"<polygon points="{corners}" fill="#000" stroke="#fff" stroke-width=".8"/>"##)
+        }
+        Verdict::ForJudgement => {
+            let (left, top, side) = (x - RADIUS + 0.5, y - RADIUS + 0.5, 2.0 * RADIUS - 1.0);
+            write!(
+                out,
+                r##"<rect x="{left:.1}" y="{top:.1}" width="{side:.1}" height="{side:.1}" fill="#fff" stroke="#000" stroke-width="1.6"/>"##
+            )
+        }
+    };
+}
+
+fn push_runs(runs: &[Vec<(f64, f64)>], out: &mut String) {
+    for run in runs {
+        let places: Vec<String> = run.iter().map(|(x, y)| format!("{x:.1},{y:.1}")).collect();
+        let places = places.join(" ");
+        // White below black keeps the line apart from the hatching.
+        let _ = write!(out, r##"<polyline points="{places}" fill="none" stroke="#fff" stroke-width="4.5"/>"##);
+        let _ = write!(out, r##"<polyline points="{places}" fill="none" stroke="#000" stroke-width="1.8"/>"##);
+    }
+}
+
+/// How far a run reaches on the drawing.
+fn span(run: &[(f64, f64)]) -> f64 {
+    run.windows(2).map(|pair| (pair[1].0 - pair[0].0).abs() + (pair[1].1 - pair[0].1).abs()).sum()
 }
 
 /// The names to be written and the point beside which each stands: states whose marks cover each other share one.
@@ -310,7 +418,7 @@ mod tests {
     use super::*;
 
     fn point(name: &str, p_r: f64, t_r: f64) -> Point {
-        Point { name: name.into(), p_r, t_r }
+        Point { name: name.into(), p_r, t_r, verdict: Verdict::Confirmed }
     }
 
     #[test]
@@ -328,8 +436,40 @@ mod tests {
 
     #[test]
     fn states_at_one_place_share_a_name_and_markup_is_text() {
-        let svg = Plane { gas: "a < b".into(), points: vec![point("full", 0.3, 2.4), point("again", 0.3, 2.4)] }.svg(1);
+        let svg = Plane {
+            gas: "a < b".into(),
+            points: vec![point("full", 0.3, 2.4), point("again", 0.3, 2.4)],
+            line: Vec::new(),
+            limit: String::new(),
+        }
+        .svg(1);
         assert!(svg.contains(">full, again</text>") && svg.contains("a &lt; b"), "{svg}");
+    }
+
+    #[test]
+    fn the_line_of_the_limit_has_a_label_and_breaks_where_it_jumps() {
+        let rising = (0..20).map(|at| (0.02 + 0.005 * f64::from(at), 0.8 * math::powi(1.05, at)));
+        let beyond = (20..30).map(|at| (2.0 + 0.1 * f64::from(at), 0.8 * math::powi(1.05, at)));
+        let plane = Plane {
+            gas: "n2".into(),
+            points: vec![point("full", 0.3, 2.4)],
+            line: rising.chain(beyond).collect(),
+            limit: "1\u{a0}%".into(),
+        };
+        let runs = plane.runs(&Axes::of(&plane.points));
+        assert_eq!(runs.iter().map(Vec::len).collect::<Vec<_>>(), [20, 10]);
+        assert!(plane.svg(1).contains(">1\u{a0}%</text>"));
+    }
+
+    #[test]
+    fn the_mark_of_a_state_tells_its_verdict_without_colour() {
+        let mark = |verdict| {
+            let mut out = String::new();
+            push_mark(10.0, 10.0, verdict, &mut out);
+            out
+        };
+        let marks = [Verdict::Confirmed, Verdict::Failed, Verdict::ForJudgement].map(mark);
+        assert!(marks[0].starts_with("<circle") && marks[1].starts_with("<polygon") && marks[2].starts_with("<rect"));
     }
 
     #[test]

@@ -6,22 +6,24 @@ use uom::si::pressure::pascal;
 use uom::si::thermodynamic_temperature::kelvin;
 
 use super::answer::{emphasis, words};
+use super::gas_model::reduced_number;
+use crate::gas::verdict::{IdealError, Judge};
 use crate::report::draft::{Draft, markdown};
 use crate::report::formula::{Formula, Symbol};
 use crate::report::markdown::escape;
+use crate::report::model::{judge_source, limit_text, model_words};
 use crate::report::page::{Plane, Point};
-use crate::report::typeset::{NO_BREAK, typeset_number};
+use crate::report::typeset::{NO_BREAK, typeset_number, typeset_unit};
 use crate::report::verdict::margin;
-
-use crate::sheet::{GasId, StateId};
+use crate::sheet::{GasId, Property, StateId};
 use crate::solve::{StateVerdict, Verdict};
-use crate::units::{write_figures, write_to_place};
+use crate::units::write_to_place;
 
 /// The assumptions, and the figures of the gases among them.
 #[derive(Clone, Debug, Serialize)]
 pub(in crate::report) struct Assumptions {
     rows: Vec<Row>,
-    planes: Vec<PlaneView>,
+    gases: Vec<GasView>,
     #[serde(skip)]
     pub(in crate::report) figures: Vec<Plane>,
 }
@@ -36,12 +38,63 @@ struct Row {
     line: u32,
 }
 
+/// An ideal gas: the errors of its law, and its figure.
+#[derive(Clone, Debug, Serialize)]
+struct GasView {
+    judged: Option<JudgedGas>,
+    plane: Option<PlaneView>,
+}
+
+/// The errors of the ideal law of one gas.
+#[derive(Clone, Debug, Serialize)]
+struct JudgedGas {
+    head: String,
+    columns: Vec<Value>,
+    rows: Vec<JudgedRow>,
+    note: Value,
+}
+
+/// A state and the errors of the ideal law there.
+#[derive(Clone, Debug, Serialize)]
+struct JudgedRow {
+    name: String,
+    values: Vec<Value>,
+    verdict: &'static str,
+    failed: bool,
+    line: u32,
+}
+
+/// What the ideal law may be off in, and how it is shown.
+#[derive(Clone, Copy)]
+struct Deviation {
+    property: Property,
+    symbol: &'static str,
+    unit: &'static str,
+    of: fn(&IdealError) -> f64,
+    /// From SI to the unit, and the decimal place; a percentage has its own.
+    factor: f64,
+    place: i32,
+}
+
+impl Deviation {
+    const DENSITY: Self =
+        Self { property: Property::Rho, symbol: "rho", unit: "%", of: |errors| errors.density_percent, factor: 1.0, place: -2 };
+    const OTHERS: [Self; 4] = [
+        Self { property: Property::Cp, symbol: "c_p", unit: "%", of: |errors| errors.cp_percent, factor: 1.0, place: -2 },
+        Self { property: Property::W, symbol: "w", unit: "%", of: |errors| errors.w_percent, factor: 1.0, place: -2 },
+        Self { property: Property::H, symbol: "h", unit: "kJ/kg", of: |errors| errors.h_j_kg, factor: 1e-3, place: -2 },
+        Self { property: Property::S, symbol: "s", unit: "J/(kg.K)", of: |errors| errors.s_j_kg_k, factor: 1.0, place: -2 },
+    ];
+}
+
 /// The figure of a gas: its number, and each of its states in numbers.
 #[derive(Clone, Debug, Serialize)]
 struct PlaneView {
     number: usize,
     gas: String,
     critical_source: String,
+    /// The limit of the sheet with its sign of percent, where the figure has its line; else empty.
+    limit: String,
     states: Vec<PlaneRow>,
 }
 
@@ -59,22 +112,23 @@ struct PlaneRow {
 /// The assumptions of a solved sheet.
 pub(in crate::report) fn assumptions(draft: &mut Draft) -> Assumptions {
     let mut rows = Vec::new();
-    let mut planes = Vec::new();
+    let mut gases = Vec::new();
     let mut figures = Vec::new();
     for (gas, states) in states_of_gases(draft) {
         let sheet_gas = draft.input.sheet.gas(gas);
         let title = sheet_gas.gas.title();
+        let judge = Judge::of(&sheet_gas.gas);
         rows.push(Row {
             text: format!("{} is an ideal gas", capitalised(&title)),
-            because: markdown(reason(draft, gas, &states)),
+            because: markdown(reason(draft, gas, &states, judge.as_ref())),
             verdict: words(gravest(&states)),
             failed: gravest(&states) == Verdict::Failed,
             line: draft.line(sheet_gas.statement),
         });
-        if let Some((view, plane)) = plane(draft, gas, &states, figures.len() + 1) {
-            planes.push(view);
-            figures.push(plane);
-        }
+        let judged = judge.as_ref().map(|judge| judged(draft, gas, &states, judge));
+        let (view, figure) = plane(draft, gas, &states, judge.as_ref(), figures.len() + 1).unzip();
+        figures.extend(figure);
+        gases.push(GasView { judged, plane: view });
     }
     let input = draft.input;
     for (at, clause) in input.sheet.assumptions.iter().enumerate() {
@@ -95,7 +149,7 @@ pub(in crate::report) fn assumptions(draft: &mut Draft) -> Assumptions {
         let (failed, line) = (verdict == Verdict::Failed, draft.line(clause.statement));
         rows.push(Row { text: clause.text.clone(), because: markdown(because), verdict: words(verdict), failed, line });
     }
-    Assumptions { rows, planes, figures }
+    Assumptions { rows, gases, figures }
 }
 
 /// What the sheet assumes of each gas, and the gravest verdict on it.
@@ -131,48 +185,165 @@ fn gravest(states: &[&StateVerdict]) -> Verdict {
     }
 }
 
-/// Why the ideal law is taken to hold: the error where a reference equation tells it, and the rules of thumb.
-fn reason(draft: &Draft, gas: GasId, states: &[&StateVerdict]) -> String {
+/// Why the ideal law is taken to hold or not: the largest error where a reference equation tells it, and the rules of thumb.
+fn reason(draft: &Draft, gas: GasId, states: &[&StateVerdict], judge: Option<&Judge>) -> String {
     let sheet = draft.input.sheet;
     let name = |state: &StateVerdict| emphasis(&sheet.state(state.state).name);
-    let list = |states: &[&&StateVerdict]| states.iter().map(|state| name(state)).collect::<Vec<_>>().join(", ");
+    let list = |some: &[&&StateVerdict]| match some.len() {
+        all if all == states.len() && all > 1 => "every state".to_owned(),
+        _ => some.iter().map(|state| name(state)).collect::<Vec<_>>().join(", "),
+    };
+    let limit = draft.input.ideal_limit_percent();
     let mut sentences: Vec<String> = Vec::new();
-    let errors: Vec<String> = states
-        .iter()
-        .filter_map(|state| {
-            state.ideal_error_percent.map(|error| format!("{}{NO_BREAK}% at {}", typeset_number(&write_figures(error, 2)), name(state)))
-        })
-        .collect();
-    if !errors.is_empty() {
-        let limit = sheet.head.ideal_gas_limit.map_or(1.0, |(limit, _)| limit * 100.0);
-        sentences.push(format!("error of the ideal law in density {}; limit {}{NO_BREAK}%", errors.join(", "), write_figures(limit, 2)));
+    if let Some(judge) = judge {
+        let largest = |of: fn(&IdealError) -> f64, used: &dyn Fn(StateId) -> bool| {
+            let errors = states.iter().filter(|state| used(state.state)).filter_map(|state| Some((of(state.errors.as_ref()?), *state)));
+            errors.filter(|(error, _)| error.is_finite()).max_by(|a, b| a.0.abs().total_cmp(&b.0.abs()))
+        };
+        let error = |(error, state): (f64, &StateVerdict)| format!("{}{NO_BREAK}% at {}", percent(error, limit), name(state));
+        let density = largest(|errors| errors.density_percent, &|_| true).map(|found| format!("in density {}", error(found)));
+        // Heat capacity and speed of sound decide too where they are used; they are told where they do.
+        let uses = |id: StateId, wanted: Property| draft.input.state_uses(id, |property| property == wanted);
+        let cp = largest(|errors| errors.cp_percent, &|id| uses(id, Property::Cp));
+        let cp = cp.filter(|(error, _)| error.abs() > limit).map(|found| format!("in heat capacity {}", error(found)));
+        let w = largest(|errors| errors.w_percent, &|id| uses(id, Property::W));
+        let w = w.filter(|(error, _)| error.abs() > limit).map(|found| format!("in speed of sound {}", error(found)));
+        let errors: Vec<String> = [density, cp, w].into_iter().flatten().collect();
+        if !errors.is_empty() {
+            sentences.push(format!(
+                "largest error of the ideal law, by {}: {}; limit {}{NO_BREAK}%",
+                model_words(judge.real().kind()),
+                errors.join(", "),
+                limit_text(limit)
+            ));
+        }
+        let beyond: Vec<&&StateVerdict> = states.iter().filter(|state| state.errors.is_none() && state.p_pa.is_some()).collect();
+        if !beyond.is_empty() {
+            sentences.push(format!("beyond the range of {} at {}", model_words(judge.real().kind()), list(&beyond)));
+        }
+    } else {
+        sentences.push("no reference equation of it is known here, the rules of thumb stand in".to_owned());
     }
     let kept: Vec<&&StateVerdict> = states.iter().filter(|state| state.rule_a == Some(true) || state.rule_b == Some(true)).collect();
     let refused: Vec<&&StateVerdict> = states.iter().filter(|state| state.rule_a == Some(false) && state.rule_b == Some(false)).collect();
     let unknown: Vec<&&StateVerdict> = states.iter().filter(|state| state.rule_a.is_none() && state.rule_b.is_none()).collect();
-    if !kept.is_empty() {
-        sentences.push(format!("within the rules of thumb at {}", list(&kept)));
-    }
-    if !refused.is_empty() {
-        sentences.push(format!("outside the rules of thumb at {}", list(&refused)));
-    }
+    let rules = match (kept.is_empty(), refused.is_empty()) {
+        (false, true) => format!("common practice: within the rules of thumb at {}", list(&kept)),
+        (true, false) => format!("common practice: outside the rules of thumb at {}", list(&refused)),
+        (false, false) => format!("common practice: within the rules of thumb at {}, outside them at {}", list(&kept), list(&refused)),
+        (true, true) => String::new(),
+    };
+    sentences.extend(Some(rules).filter(|rules| !rules.is_empty()));
     if !unknown.is_empty() {
         let why = if sheet.gas(gas).gas.critical_pressure().is_none() {
             "no critical point is known"
         } else {
             "pressure or temperature is not determined"
         };
-        sentences.push(format!("not judged at {}: {why}", list(&unknown)));
+        sentences.push(format!("no rule of thumb at {}: {why}", list(&unknown)));
     }
     sentences.join("; ")
 }
 
+/// An error in percent, to two decimals, or as fine as the limit needs.
+fn percent(error: f64, limit_percent: f64) -> String {
+    let place = if limit_percent < 0.1 { crate::units::math::log10(limit_percent).floor() as i32 - 1 } else { -2 };
+    to_place(error, place)
+}
+
+/// A number to a decimal place, zero without a sign.
+fn to_place(value: f64, place: i32) -> String {
+    let written = write_to_place(value, place);
+    let is_zero = written.bytes().all(|byte| matches!(byte, b'0' | b'.' | b'-'));
+    typeset_number(if is_zero { written.trim_start_matches('-') } else { &written })
+}
+
+/// The errors of the ideal law of one gas, state by state; only what the states use.
+fn judged(draft: &mut Draft, gas: GasId, states: &[&StateVerdict], judge: &Judge) -> JudgedGas {
+    let input = draft.input;
+    let limit = input.ideal_limit_percent();
+    let uses = |wanted: Property| states.iter().any(|state| input.state_uses(state.state, |property| property == wanted));
+    let mut columns: Vec<Deviation> = vec![Deviation::DENSITY];
+    columns.extend(Deviation::OTHERS.into_iter().filter(|column| uses(column.property)));
+    let heads = columns
+        .iter()
+        .map(|column| {
+            let symbol = draft.math(&Formula::Symbol(Symbol::of_name(column.symbol)));
+            markdown(if column.unit == "%" { format!("{symbol}, %") } else { format!("{symbol}, {}", escape(&typeset_unit(column.unit))) })
+        })
+        .collect();
+    let rows = states
+        .iter()
+        .map(|state| {
+            let value = |column: &Deviation| {
+                let used = column.property == Property::Rho || input.state_uses(state.state, |property| property == column.property);
+                let error = state.errors.as_ref().filter(|_| used).map(|errors| (column.of)(errors)).filter(|error| error.is_finite());
+                let Some(error) = error else { return markdown("") };
+                if column.unit != "%" {
+                    return markdown(to_place(error * column.factor, column.place));
+                }
+                let text = percent(error, limit);
+                markdown(if error.abs() > limit { format!("**{text}**") } else { text })
+            };
+            JudgedRow {
+                name: input.sheet.state(state.state).name.clone(),
+                values: columns.iter().map(value).collect(),
+                verdict: words(state.verdict),
+                failed: state.verdict == Verdict::Failed,
+                line: draft.line(input.sheet.state(state.state).statement),
+            }
+        })
+        .collect();
+    let title = input.gas_title(gas);
+    JudgedGas {
+        head: format!("Error of the ideal gas law for {title}, ideal less real at the same pressure and temperature"),
+        columns: heads,
+        rows,
+        note: markdown(judged_note(draft, states, judge, &columns)),
+    }
+}
+
+/// By what the ideal law is judged, what decides, and where the judge itself is extrapolated.
+fn judged_note(draft: &Draft, states: &[&StateVerdict], judge: &Judge, columns: &[Deviation]) -> String {
+    let limit = limit_text(draft.input.ideal_limit_percent());
+    let kind = model_words(judge.real().kind());
+    let mut sentences = vec![format!("Judged by {kind}: {}.", escape(judge_source(judge)))];
+    let words =
+        |percent: bool| columns.iter().filter(move |column| (column.unit == "%") == percent).map(|column| column.property.row().word);
+    let (deciding, shown) = (words(true).collect::<Vec<_>>(), words(false).collect::<Vec<_>>());
+    let decides = if deciding.len() > 1 { "decide" } else { "decides" };
+    sentences.push(format!("{} {decides} against the limit of the sheet, {limit}{NO_BREAK}%.", capitalised(&deciding.join(", "))));
+    if !shown.is_empty() {
+        sentences.push(format!("Differences in {} do not decide: their zero is a convention.", shown.join(" and ")));
+    }
+    let names = |wanted: &dyn Fn(&StateVerdict) -> bool| {
+        let names = states.iter().filter(|state| wanted(state)).map(|state| emphasis(&draft.input.sheet.state(state.state).name));
+        names.collect::<Vec<_>>().join(", ")
+    };
+    let extrapolated = names(&|state| state.errors.is_some_and(|errors| errors.is_extrapolated));
+    if !extrapolated.is_empty() {
+        sentences.push(format!("It is extrapolated beyond its published range at {extrapolated}."));
+    }
+    let beyond = names(&|state| state.errors.is_none());
+    if !beyond.is_empty() {
+        sentences.push(format!("It tells nothing at {beyond}, which is left for the checker to judge."));
+    }
+    sentences.join(" ")
+}
+
+/// Points of the line of the limit in the figure.
+const POINTS_OF_THE_LINE: u32 = 90;
+
 /// The figure of a gas with at least one state of known pressure and temperature.
-fn plane(draft: &Draft, gas: GasId, states: &[&StateVerdict], number: usize) -> Option<(PlaneView, Plane)> {
+fn plane(draft: &Draft, gas: GasId, states: &[&StateVerdict], judge: Option<&Judge>, number: usize) -> Option<(PlaneView, Plane)> {
     let sheet = draft.input.sheet;
     let model = &sheet.gas(gas).gas;
-    let p_c_pa = model.critical_pressure()?.get::<pascal>();
-    let t_c_k = model.critical_temperature()?.get::<kelvin>();
+    // The line of the judge is drawn by the critical point of its model, and so are the states.
+    let own = judge.and_then(|judge| judge.real().critical_point());
+    let (t_c_k, p_c_pa) = match own {
+        Some(critical) => critical,
+        None => (model.critical_temperature()?.get::<kelvin>(), model.critical_pressure()?.get::<pascal>()),
+    };
     let mut points = Vec::new();
     let mut rows = Vec::new();
     for state in states {
@@ -182,23 +353,31 @@ fn plane(draft: &Draft, gas: GasId, states: &[&StateVerdict], number: usize) -> 
             continue;
         }
         let name = sheet.state(state.state).name.clone();
-        let reduced = |value: f64| typeset_number(&if value >= 0.1 { write_to_place(value, -2) } else { write_figures(value, 2) });
         let word = |rule: Option<bool>| rule.map_or("unknown", |holds| if holds { "yes" } else { "no" });
         rows.push(PlaneRow {
             name: name.clone(),
-            p_r: reduced(p_r),
-            t_r: reduced(t_r),
+            p_r: reduced_number(p_r),
+            t_r: reduced_number(t_r),
             a: word(state.rule_a),
             b: word(state.rule_b),
             verdict: words(state.verdict),
         });
-        points.push(Point { name, p_r, t_r });
+        points.push(Point { name, p_r, t_r, verdict: state.verdict });
     }
     if points.is_empty() {
         return None;
     }
-    let (title, critical_source) = (model.title(), model.critical_source().to_owned());
-    Some((PlaneView { number, gas: title.clone(), critical_source, states: rows }, Plane { gas: title, points }))
+    let limit = draft.input.ideal_limit_percent();
+    let line = judge.map_or_else(Vec::new, |judge| judge.line_in_reduced_plane(limit, POINTS_OF_THE_LINE));
+    let limit = format!("{}{NO_BREAK}%", limit_text(limit));
+    let view = PlaneView {
+        number,
+        gas: model.title(),
+        critical_source: model.critical_source().to_owned(),
+        limit: if line.is_empty() { String::new() } else { limit.clone() },
+        states: rows,
+    };
+    Some((view, Plane { gas: model.title(), points, line, limit }))
 }
 
 fn capitalised(text: &str) -> String {

@@ -5,6 +5,7 @@ use std::collections::BTreeSet;
 use minijinja::Value;
 use serde::Serialize;
 
+use super::gas_model;
 use crate::report::draft::{Draft, markdown};
 use crate::report::formula::Formula;
 use crate::report::typeset::{typeset_reading, typeset_uncertainty, typeset_unit};
@@ -141,13 +142,7 @@ fn used(draft: &Draft) -> (BTreeSet<QuantityId>, Vec<Constant>) {
 /// Where the constant of a gas comes from.
 fn source_of_constant(draft: &Draft, id: QuantityId) -> String {
     let Origin::GasConstant(gas) = draft.input.quantity(id).origin else { return String::new() };
-    let gas = &draft.input.sheet.gas(gas).gas;
-    let field = draft.input.quantity(id).name.rsplit('.').next().unwrap_or_default();
-    match field {
-        "R" => "R/M with R of CODATA 2022, M by atomic weights of CIAAW 2021".to_owned(),
-        "M" => "atomic weights of CIAAW 2021".to_owned(),
-        _ => gas.critical_source().to_owned(),
-    }
+    gas_model::source_of_constant(draft, gas, id)
 }
 
 fn constant_of_nature(draft: &mut Draft, constant: Constant) -> Option<Given> {

@@ -5,6 +5,7 @@
 mod answer;
 mod assumption;
 mod check;
+mod gas_model;
 mod given;
 mod head;
 mod listing;

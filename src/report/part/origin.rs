@@ -4,7 +4,8 @@ use super::answer::emphasis;
 use crate::report::draft::Draft;
 use crate::report::formula::{Formula, Put};
 use crate::report::markdown::escape;
-use crate::sheet::{Expr, ExprId, GasId, Property, QuantityId, Relation, RelationOrigin};
+use crate::report::model::model_words;
+use crate::sheet::{Expr, ExprId, GasId, GasModel, Property, QuantityId, Relation, RelationOrigin};
 use crate::solve::Step;
 
 /// Width in em above which a relation is not set within a sentence.
@@ -71,9 +72,8 @@ const LONGEST_TITLE: usize = 32;
 
 /// What a gas is called in a sentence.
 pub(super) fn gas_title(draft: &Draft, gas: GasId) -> String {
-    let gas = draft.input.sheet.gas(gas);
-    let title = gas.gas.title();
-    if title.chars().count() > LONGEST_TITLE { gas.name.clone() } else { title }
+    let title = draft.input.gas_title(gas);
+    if title.chars().count() > LONGEST_TITLE { draft.input.sheet.gas(gas).name.clone() } else { title }
 }
 
 /// The name of a relation, for a sentence that begins with it.
@@ -89,6 +89,29 @@ fn relation_name(draft: &Draft, relation: &Relation) -> String {
         RelationOrigin::Law(state, property) => {
             let state = input.sheet.state(state);
             let gas = gas_title(draft, state.gas);
+            let sheet_gas = input.sheet.gas(state.gas);
+            // Where both are used, one is the inverse of the other whatever the model.
+            let inverse = property == Property::Rho && state.properties.iter().any(|(other, _)| *other == Property::V);
+            match (&sheet_gas.model, property) {
+                (GasModel::Real(_) | GasModel::HumidAir(_), Property::Rho) if inverse => {
+                    return format!("Density and specific volume of state {}", emphasis(&state.name));
+                }
+                (_, Property::Mu | Property::Lambda) => {
+                    return format!("Published correlation of the {} of {} (source under States)", property.row().word, escape(&gas));
+                }
+                (GasModel::Real(real), _) => {
+                    return format!(
+                        "State {} by {} for {} (source under States)",
+                        emphasis(&state.name),
+                        model_words(real.kind()),
+                        escape(&gas)
+                    );
+                }
+                (GasModel::HumidAir(_), _) => {
+                    return format!("Model of humid air at state {} (source under States)", emphasis(&state.name));
+                }
+                (GasModel::Ideal, _) => {}
+            }
             match property {
                 Property::H | Property::U | Property::S | Property::Cp | Property::Cv | Property::K | Property::W => {
                     format!("Ideal-gas {} of {} (source under States)", property.row().word, escape(&gas))

@@ -3,14 +3,13 @@
 use minijinja::Value;
 use serde::Serialize;
 
-use crate::gas::polynomial::POLYNOMIAL_SOURCE;
+use super::gas_model;
 use crate::report::draft::{Draft, markdown};
 use crate::report::formula::{Formula, Symbol};
 use crate::report::markdown::escape;
 use crate::report::typeset::{typeset_number, typeset_unit};
-use crate::report::written::{Written, scaled, without_end_zeros};
+use crate::report::written::{Written, scaled};
 use crate::sheet::{GasId, Property, ShownUnit, StateId};
-use crate::units::write_figures;
 
 /// Properties that one table of a page has room for; more go into a second one below.
 const PROPERTIES_OF_A_TABLE: usize = 6;
@@ -55,7 +54,8 @@ pub(in crate::report) fn state_tables(draft: &mut Draft) -> Vec<StateTable> {
             properties.into_iter().map(|(property, shown, largest)| (property, scaled(&shown, largest))).collect();
         let n_tables = properties.len().div_ceil(PROPERTIES_OF_A_TABLE);
         for (at, columns) in properties.chunks(PROPERTIES_OF_A_TABLE).enumerate() {
-            let model = if at + 1 == n_tables { model(draft, gas, &properties) } else { String::new() };
+            let used: Vec<Property> = properties.iter().map(|(property, _)| *property).collect();
+            let model = if at + 1 == n_tables { gas_model::model(draft, gas, &states, &used) } else { String::new() };
             tables.push(table(draft, gas, &states, columns, model));
         }
     }
@@ -87,7 +87,7 @@ fn table(draft: &mut Draft, gas: GasId, states: &[StateId], columns: &[(Property
         // Of a second table a state that has none of its properties is no part.
         .filter(|row: &Row| row.values.iter().any(|value| !value.is_empty()))
         .collect();
-    StateTable { gas: input.sheet.gas(gas).gas.title(), columns: heads, rows, model: markdown(model) }
+    StateTable { gas: input.gas_title(gas), columns: heads, rows, model: markdown(model) }
 }
 
 /// A name whose symbol is that of a property.
@@ -97,22 +97,4 @@ fn bare_name(property: Property) -> &'static str {
         Property::Cv => "c_v",
         other => other.row().field,
     }
-}
-
-/// The model of a gas, its source and its range, as far as the properties need them.
-fn model(draft: &Draft, gas: GasId, properties: &[(Property, ShownUnit)]) -> String {
-    let sheet_gas = draft.input.sheet.gas(gas);
-    let gas = &sheet_gas.gas;
-    let mut text = format!("Model of {}: {} gas.", escape(&gas.title()), sheet_gas.model.word());
-    if properties.iter().any(|(property, _)| property.is_caloric()) && gas.has_caloric().is_ok() {
-        let range = gas.caloric_range();
-        let k = |t_k: f64| escape(&Written { number: without_end_zeros(&write_figures(t_k, 6)), unit: "K".to_owned() }.typeset());
-        text.push_str(&format!(
-            " Heat capacity, enthalpy and entropy by polynomials published for {} to {} ({}); *h* and *s* are zero for the ideal gas at 298.15\u{a0}K and 100\u{a0}kPa.",
-            k(range.low_k),
-            k(range.high_k),
-            escape(POLYNOMIAL_SOURCE)
-        ));
-    }
-    text
 }

@@ -4,6 +4,7 @@ use minijinja::Value;
 use serde::Serialize;
 
 use super::answer::emphasis;
+use super::gas_model::saturation;
 use super::given::described;
 use super::narration::narrate;
 use super::order::{fixed_state, grouped, is_plain, uses};
@@ -131,8 +132,15 @@ fn entry(draft: &mut Draft, steps: &[&Step]) -> Entry {
             [origins(draft, step), how].join(" ").trim_start().to_owned()
         }
     };
+    let expressions: Vec<ExprId> = match &step.method {
+        Method::ClosedForm { expression } => vec![*expression],
+        Method::Numeric { .. } => {
+            step.relations.iter().filter_map(|at| sheet.relations.get(*at)).flat_map(|relation| [relation.left, relation.right]).collect()
+        }
+    };
     let from = [origin, with(draft, &used), reference(draft, step)]
         .into_iter()
+        .chain(saturation(draft, &expressions))
         .filter(|sentence| !sentence.is_empty())
         .collect::<Vec<_>>()
         .join(" ");
