@@ -7,6 +7,10 @@ use gaswright::report::{self, Format, Input, Templates};
 use gaswright::solve::Program;
 use gaswright::{sheet, solve, syntax};
 
+/// The allocator of the program.
+#[global_allocator]
+static ALLOCATOR: mimalloc::MiMalloc = mimalloc::MiMalloc;
+
 /// The sheets of the benches: name and text.
 const SHEETS: [(&str, &str); 3] = [
     ("nitrogen-buffer", include_str!("../sheets/examples/nitrogen-buffer.gw")),

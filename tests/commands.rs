@@ -237,6 +237,9 @@ fn findings_for_programs_go_to_standard_output() {
     }
     let checked = folder.run(&["check", "--format", "json", "good.gw"]).objects().remove(0);
     assert_eq!(checked["status"], "checked");
+    let schema: Value = serde_json::from_str(&folder.run(&["schema"]).results).unwrap();
+    let validator = jsonschema::draft202012::new(&schema).unwrap();
+    assert!(validator.is_valid(&checked), "{:?}", validator.iter_errors(&checked).map(|error| error.to_string()).collect::<Vec<_>>());
 }
 
 #[test]

@@ -277,6 +277,17 @@ fn results_follow_the_schema() {
 }
 
 #[test]
+fn the_margin_of_a_temperature_is_an_interval() {
+    let text = "given T = 31.0 degC \"Gas\" from \"TI-30\"\nlet U = T + 3 K in degC \"Header\"\nrequire U < 40 degC \"Cool\"\nanswer U\n";
+    let object = with(text, |input| serde_json::to_value(result(input)).expect("JSON"));
+    let requirement = &object["requirements"][0];
+    assert_eq!((&requirement["unit"], &requirement["margin_unit"]), (&Value::from("degC"), &Value::from("K")));
+    let margin = requirement["margin"].as_f64().expect("a number");
+    // Three roundings of numbers of 313.
+    assert!((margin - 6.0).abs() < 1e-12, "{margin}");
+}
+
+#[test]
 fn a_failed_sheet_has_findings_and_no_value() {
     let object = with("given V = 3.20 m3 \"Volume\" from \"Plate\"\nlet m = V * rho\nanswer m\n", |input| {
         serde_json::to_value(result(input)).expect("JSON")

@@ -2,9 +2,10 @@
 
 use super::eos::property::{Property, StateProperties};
 use super::eos::saturation_line::Saturation;
+use super::phase::frost_point;
 use super::property_pair::{AGREES, MOST_STEPS, ROUNDING, SAME, STEP};
 use super::real_gas::RealGas;
-use super::state_error::{Limit, StateError};
+use super::state_error::StateError;
 use crate::units::math::{exp, ln};
 
 /// Densities at which an isotherm is looked at for roots.
@@ -147,25 +148,26 @@ impl RealGas {
         Ok(LowerEnd::Bracket(at_low.t_k))
     }
 
+    /// What a state is that is colder than the gas goes at a pressure for which there is no saturation temperature: above the critical
+    /// pressure dense fluid, below that of the triple point solid, where the line of the solid is known.
+    fn below_without_line(&self, p_pa: f64, given: (Property, f64)) -> StateError {
+        let no_state = || self.no_state((Property::Pressure, p_pa), given);
+        let Some(equation) = self.equation() else { return no_state() };
+        let c = equation.constants();
+        if p_pa >= c.p_c_own_pa {
+            return StateError::Liquid { t_k: c.t_c_own_k, p_pa, t_sat_k: None, p_sat_pa: None };
+        }
+        frost_point(equation, p_pa, c.t_min_k).map_or_else(no_state, |t_k| StateError::Solid {
+            t_k,
+            p_pa,
+            t_triple_k: c.t_min_k,
+            p_border_pa: equation.solid.sublimation_pa(t_k),
+        })
+    }
+
     /// What a state below the saturation temperature of its pressure is.
     fn below_the_isobar(&self, p_pa: f64, (property, target): (Property, f64), line: Option<&Saturation>) -> StateError {
-        let (Some(equation), Some(point)) = (self.equation(), line) else {
-            let p_is_high = self.equation().is_some_and(|equation| p_pa >= equation.constants().p_c_own_pa);
-            return if p_is_high {
-                let t_k = self.equation().map_or(f64::NAN, |equation| equation.constants().t_c_own_k);
-                StateError::Liquid { t_k, p_pa, t_sat_k: None, p_sat_pa: None }
-            } else {
-                StateError::OutOfRange(self.range().beyond(0.5 * self.range().t_limit_low_k, p_pa).unwrap_or(Limit {
-                    quantity: "temperature",
-                    value: f64::NAN,
-                    low: self.range().t_low_k,
-                    high: self.range().t_high_k,
-                    limit_low: self.range().t_limit_low_k,
-                    limit_high: self.range().t_limit_high_k,
-                    unit: "K",
-                }))
-            };
-        };
+        let (Some(equation), Some(point)) = (self.equation(), line) else { return self.below_without_line(p_pa, (property, target)) };
         let m = equation.constants().molar_mass_kg_mol;
         let of = |rho: f64| {
             let value = equation.properties(point.t_k, rho * m).get(property).value;

@@ -179,7 +179,7 @@ pub(crate) fn condensation_temperature(equation: &Equation, p_pa: f64) -> Option
 }
 
 /// Temperature of the sublimation line at a pressure, by bisection in temperature; `None` without one, and outside it.
-fn frost_point(equation: &Equation, p_pa: f64, high_k: f64) -> Option<f64> {
+pub(super) fn frost_point(equation: &Equation, p_pa: f64, high_k: f64) -> Option<f64> {
     let of = |t_k: f64| equation.solid.sublimation_pa(t_k);
     let mut high = high_k.min(equation.constants().t_min_k);
     of(high)?;

@@ -8,12 +8,13 @@ use uom::si::mass_density::kilogram_per_cubic_meter;
 use uom::si::pressure::pascal;
 use uom::si::thermodynamic_temperature::kelvin;
 
-use super::eos::equation::Equation;
+use super::eos::equation::{AIR, Equation};
 use super::eos::gerg::{GERG_P_LIMIT_PA, GERG_P_PA, GERG_SOURCE, GERG_T_K, GERG_T_LIMIT_K, GERG_UNCERTAINTY, Gerg};
 use super::eos::peng_robinson::{PENG_ROBINSON_SOURCE, PengRobinson};
 use super::eos::property::StateProperties;
 use super::ideal_gas::Gas;
 use super::phase::{NearCondensation, PhaseGuard};
+use super::polynomial::REFERENCE_TEMPERATURE_K;
 use super::state_error::{Limit, StateError};
 use crate::units::constants::MOLAR_GAS_CONSTANT;
 
@@ -117,8 +118,8 @@ impl ModelRange {
 
 /// A real gas. Cheap to clone.
 ///
-/// A pure gas has its reference equation, a mixture of the 21 components of GERG-2008 that model, everything else Peng and Robinson's
-/// equation. h and s are zero for the ideal gas of each species at 298.15 K and 100 kPa, as those of [`Gas`] are. M and R are those of the
+/// A pure gas has its reference equation, and so has dry air; a mixture of the 21 components of GERG-2008 has that model, everything else
+/// Peng and Robinson's equation. h and s are zero for the ideal gas of each species at 298.15 K and 100 kPa, as those of [`Gas`] are. M and R are those of the
 /// model.
 #[derive(Clone, Debug)]
 pub struct RealGas(Arc<Inner>);
@@ -134,6 +135,13 @@ struct Inner {
 #[derive(Debug)]
 pub(crate) enum Model {
     Equation(&'static Equation),
+    /// An equation for a mixture of fixed composition as if it were one substance. It has no saturation line of its own: the guard of
+    /// the mixture says where it condenses.
+    OneSubstance {
+        equation: &'static Equation,
+        /// What the entropy of the mixture is above that of the equation, J/(kg K): at the reference state that of mixing.
+        s_mixing_j_kg_k: f64,
+    },
     Gerg(Box<Gerg>),
     PengRobinson(PengRobinson),
 }
@@ -147,17 +155,25 @@ impl RealGas {
     pub fn new(gas: &Gas) -> Result<Self, NoEquation> {
         let model = match gas.species() {
             Some(species) => Equation::of(species).map(Model::Equation),
-            None => Gerg::new(gas.components()).ok().map(|gerg| Model::Gerg(Box::new(gerg))),
+            None => Self::as_one_substance(gas).or_else(|| Gerg::new(gas.components()).ok().map(|gerg| Model::Gerg(Box::new(gerg)))),
         };
         let model = match model {
             Some(model) => model,
             None => Model::PengRobinson(PengRobinson::new(gas.components()).map_err(|species| NoEquation { species })?),
         };
         let critical = match &model {
-            Model::Equation(equation) => Some((equation.constants().t_c_k, equation.constants().p_c_pa)),
+            Model::Equation(equation) | Model::OneSubstance { equation, .. } => {
+                Some((equation.constants().t_c_k, equation.constants().p_c_pa))
+            }
             _ => gas.critical_temperature().zip(gas.critical_pressure()).map(|(t, p)| (t.get::<kelvin>(), p.get::<pascal>())),
         };
         Ok(Self(Arc::new(Inner { title: gas.title(), model, guard: PhaseGuard::new(gas), critical })))
+    }
+
+    /// Dry air by its own reference equation, which is published for more temperatures and pressures than GERG-2008 is.
+    fn as_one_substance(gas: &Gas) -> Option<Model> {
+        let equation = (gas.title() == AIR).then(|| Equation::of_name(AIR)).flatten()?;
+        Some(Model::OneSubstance { equation, s_mixing_j_kg_k: gas.s_j_kg_k(REFERENCE_TEMPERATURE_K) })
     }
 
     /// What the gas is, as a sheet would say it.
@@ -170,7 +186,7 @@ impl RealGas {
     #[must_use]
     pub fn kind(&self) -> ModelKind {
         match self.0.model {
-            Model::Equation(_) => ModelKind::ReferenceEquation,
+            Model::Equation(_) | Model::OneSubstance { .. } => ModelKind::ReferenceEquation,
             Model::Gerg(_) => ModelKind::Gerg2008,
             Model::PengRobinson(_) => ModelKind::PengRobinson,
         }
@@ -180,7 +196,7 @@ impl RealGas {
     #[must_use]
     pub fn source(&self) -> &'static str {
         match &self.0.model {
-            Model::Equation(equation) => equation.constants().source,
+            Model::Equation(equation) | Model::OneSubstance { equation, .. } => equation.constants().source,
             Model::Gerg(_) => GERG_SOURCE,
             Model::PengRobinson(_) => PENG_ROBINSON_SOURCE,
         }
@@ -190,7 +206,7 @@ impl RealGas {
     #[must_use]
     pub fn uncertainty(&self) -> &'static str {
         match &self.0.model {
-            Model::Equation(equation) => equation.constants().uncertainty,
+            Model::Equation(equation) | Model::OneSubstance { equation, .. } => equation.constants().uncertainty,
             Model::Gerg(_) => GERG_UNCERTAINTY,
             Model::PengRobinson(_) => "a few percent in density, more near the critical point and for polar gases",
         }
@@ -209,7 +225,7 @@ impl RealGas {
     #[must_use]
     pub fn molar_mass_kg_mol(&self) -> f64 {
         match &self.0.model {
-            Model::Equation(equation) => equation.constants().molar_mass_kg_mol,
+            Model::Equation(equation) | Model::OneSubstance { equation, .. } => equation.constants().molar_mass_kg_mol,
             Model::Gerg(gerg) => gerg.molar_mass_kg_mol,
             Model::PengRobinson(cubic) => cubic.molar_mass_kg_mol,
         }
@@ -219,7 +235,7 @@ impl RealGas {
     #[must_use]
     pub fn gas_constant_j_kg_k(&self) -> f64 {
         match &self.0.model {
-            Model::Equation(equation) => equation.gas_constant_j_kg_k(),
+            Model::Equation(equation) | Model::OneSubstance { equation, .. } => equation.gas_constant_j_kg_k(),
             Model::Gerg(gerg) => gerg.gas_constant_j_kg_k(),
             Model::PengRobinson(cubic) => MOLAR_GAS_CONSTANT / cubic.molar_mass_kg_mol,
         }
@@ -235,7 +251,7 @@ impl RealGas {
     #[must_use]
     pub fn range(&self) -> ModelRange {
         match &self.0.model {
-            Model::Equation(equation) => {
+            Model::Equation(equation) | Model::OneSubstance { equation, .. } => {
                 let c = equation.constants();
                 ModelRange {
                     t_low_k: c.t_min_k,
@@ -305,7 +321,7 @@ impl RealGas {
     /// The density of the gas root, where phase and range are checked already.
     pub(crate) fn density_unchecked(&self, t_k: f64, p_pa: f64) -> Result<f64, StateError> {
         match &self.0.model {
-            Model::Equation(equation) => equation.density(t_k, p_pa),
+            Model::Equation(equation) | Model::OneSubstance { equation, .. } => equation.density(t_k, p_pa),
             Model::Gerg(gerg) => gerg.density(t_k, p_pa),
             Model::PengRobinson(cubic) => Ok(cubic.molar_density(t_k, p_pa)? * cubic.molar_mass_kg_mol),
         }
@@ -317,6 +333,11 @@ impl RealGas {
     pub fn properties(&self, t_k: f64, rho_kg_m3: f64) -> StateProperties {
         match &self.0.model {
             Model::Equation(equation) => equation.properties(t_k, rho_kg_m3),
+            Model::OneSubstance { equation, s_mixing_j_kg_k } => {
+                let mut state = equation.properties(t_k, rho_kg_m3);
+                state.s.value += s_mixing_j_kg_k;
+                state
+            }
             Model::Gerg(gerg) => gerg.properties(t_k, rho_kg_m3),
             Model::PengRobinson(cubic) => cubic.properties(t_k, rho_kg_m3),
         }

@@ -15,7 +15,7 @@ pub struct ResultObject {
     pub sheet: SheetObject,
     /// Which program.
     pub tool: ToolObject,
-    /// `solved` or `failed`.
+    /// `solved`, `checked` (found without errors and not solved) or `failed`.
     pub status: &'static str,
     /// Every quantity in the order of its declaration.
     pub quantities: Vec<QuantityObject>,
@@ -225,7 +225,7 @@ pub struct RulesObject {
     pub b: Option<bool>,
 }
 
-/// A requirement. `left`, `right` and `margin` are in `unit`, that of the right side.
+/// A requirement. `left` and `right` are in `unit`, that of the right side, `margin` in `margin_unit`.
 #[derive(Clone, Debug, Serialize)]
 pub struct RequirementObject {
     /// Its text.
@@ -242,6 +242,8 @@ pub struct RequirementObject {
     pub right: Option<f64>,
     /// How far it is from failing; negative only where it is not met.
     pub margin: Option<f64>,
+    /// The unit of the margin, which is a difference: without basis, `K` where `unit` is `degC`.
+    pub margin_unit: Option<String>,
     /// The unit.
     pub unit: Option<String>,
     /// Probability of being met: no uncertainty is propagated yet, so `null`.

@@ -1,5 +1,6 @@
 //! The result as data: what the object of `solve --json` holds for a sheet.
 
+use super::verdict::interval_unit;
 use crate::diagnostic::LineIndex;
 use crate::diagnostic::json::FindingObject;
 use crate::gas::verdict::{IdealError, Judge};
@@ -184,6 +185,7 @@ impl Maker<'_> {
                     left: sides.map(|sides| sides.left),
                     right: sides.map(|sides| sides.right),
                     margin: sides.map(|sides| sides.margin),
+                    margin_unit: sides.map(|sides| interval_unit(&sides.unit).to_owned()),
                     unit: sides.map(|sides| sides.unit.clone()),
                     probability: None,
                     guarded_margin: None,

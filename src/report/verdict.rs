@@ -66,8 +66,11 @@ fn margin_number(sides: &Sides) -> String {
     if is_zero { crate::units::write_figures(size, 1) } else { written }
 }
 
-/// The unit of a difference of two readings in a unit: without basis, and K for degrees Celsius.
-fn interval_unit(unit: &str) -> &str {
-    let word = unit.split(' ').next().unwrap_or_default();
-    if word == "degC" { "K" } else { word }
+/// The unit of a difference of two readings in a unit: without basis, and K for degrees Celsius, degR for degrees Fahrenheit.
+pub(super) fn interval_unit(unit: &str) -> &str {
+    match unit.split(' ').next().unwrap_or_default() {
+        "degC" => "K",
+        "degF" => "degR",
+        word => word,
+    }
 }

@@ -7,6 +7,7 @@ use crate::units::{Dimension, Rational};
 
 use super::reader::Reader;
 use super::value::{cut, folded};
+use super::wrong_unit::Claim;
 use super::{Expr, ExprId, GasFunction, Kind, Origin, QuantityId, RelationOrigin};
 
 /// Rounding allowed where temperatures or pressures are counted.
@@ -120,8 +121,10 @@ impl Reader<'_> {
         for at in 0..self.sheet.relations.len() {
             let relation = self.sheet.relations[at].clone();
             let lawful = matches!(relation.origin, RelationOrigin::Law(..) | RelationOrigin::Atmosphere);
+            let before = self.findings.len();
             let sound = lawful || self.has_undetermined(relation.left) || self.has_undetermined(relation.right) || self.agree(&relation);
             if !sound {
+                self.remember_mismatch(before, Claim::Equal(relation.left, relation.right), relation.span);
                 self.poison_below(relation.left);
                 self.poison_below(relation.right);
             }
@@ -428,7 +431,13 @@ impl Reader<'_> {
             }
             _ if first.dimension.is_none() => Ok(Measure::of(Dimension::NONE)),
             _ => {
-                let finding = code::dimension_mismatch::argument(self.place(a), function.word(), &first.dimension.describe());
+                let mut finding = code::dimension_mismatch::argument(self.place(a), function.word(), &first.dimension.describe());
+                let mut factors = Vec::new();
+                self.factors_with_dimension(a, &mut factors);
+                if factors.len() > 1 {
+                    finding = finding.fact(format!("its factors: {}", factors.join(", ")));
+                }
+                let finding = self.with_provenance(finding, &[a]);
                 self.report(finding);
                 Err(())
             }
@@ -448,6 +457,27 @@ impl Reader<'_> {
             return Err(());
         }
         Ok(Measure::of_kind(gives, Kind::Absolute, false))
+    }
+
+    /// The factors of a product that have a dimension, as written, each with it.
+    fn factors_with_dimension(&mut self, expr: ExprId, found: &mut Vec<String>) {
+        /// More than these crowd the finding.
+        const MOST: usize = 6;
+        match self.sheet.exprs.get(expr) {
+            Expr::Binary(BinaryOp::Multiply | BinaryOp::Divide, a, b) => {
+                self.factors_with_dimension(a, found);
+                self.factors_with_dimension(b, found);
+            }
+            Expr::Negate(inner) => self.factors_with_dimension(inner, found),
+            _ => {
+                if let Ok(measure) = self.measure(expr)
+                    && !measure.dimension.is_none()
+                    && found.len() < MOST
+                {
+                    found.push(format!("`{}` ({})", self.words(expr), measure.dimension.describe()));
+                }
+            }
+        }
     }
 
     /// Checks the sides of a comparison: dimension and kind. The dimension of both where they agree.
@@ -493,7 +523,10 @@ impl Reader<'_> {
                         &wanted,
                         quantity.span,
                     );
+                    let (before, span, claim) =
+                        (self.findings.len(), self.place(bound), Claim::Shown(QuantityId(at as u32), measure.dimension));
                     self.report(finding);
+                    self.remember_mismatch(before, claim, span);
                     self.poisoned[at] = true;
                 }
             }

@@ -7,6 +7,7 @@ use crate::units::{Dimension, Unit};
 use super::expression::Target;
 use super::reader::{PendingAnswer, Reader};
 use super::value::{folded, kind_of, si_unit};
+use super::wrong_unit::Claim;
 use super::{Answer, Clause, Condition, Correlation, Expr, Kind, LiveValue, Origin, Quantity, QuantityId, ShownUnit};
 
 impl Reader<'_> {
@@ -209,7 +210,11 @@ impl Reader<'_> {
             Condition::Not(inner) => self.check_condition(inner, span),
             Condition::Compare { left, right, unit, .. } => {
                 let place = self.sheet.span_of(*left).unwrap_or(span).to(self.sheet.span_of(*right).unwrap_or(span));
-                let Some(dimension) = self.check_comparison(place, *left, *right) else { return false };
+                let before = self.findings.len();
+                let Some(dimension) = self.check_comparison(place, *left, *right) else {
+                    self.remember_mismatch(before, Claim::Equal(*left, *right), place);
+                    return false;
+                };
                 *unit =
                     self.unit_of_side(*right).or_else(|| self.unit_of_side(*left)).unwrap_or_else(|| si_unit(dimension, Kind::Absolute));
                 true
@@ -275,7 +280,9 @@ impl Reader<'_> {
                 *span,
             )
             .related(declared, format!("`{name}` is {}", code::a(&found)));
+            let (before, claim) = (self.findings.len(), Claim::Shown(pending.quantity, shown.unit.dimension));
             self.report(finding);
+            self.remember_mismatch(before, claim, pending.span);
             return None;
         }
         let asked = kind_of(&shown.unit, shown.basis);

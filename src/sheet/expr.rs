@@ -165,22 +165,78 @@ impl Exprs {
 
     /// Calls `visit` with every quantity below `id`, in the order written, as often as it stands there.
     pub fn quantities(&self, id: ExprId, visit: &mut impl FnMut(QuantityId)) {
-        let mut open = vec![id];
-        while let Some(id) = open.pop() {
-            if let Expr::Quantity(quantity) = self.get(id) {
-                visit(quantity);
-            }
-            let from = open.len();
-            open.extend(self.parts(id));
-            open[from..].reverse();
-        }
+        self.find(id, &mut |quantity| {
+            visit(quantity);
+            false
+        });
     }
 
     /// Whether `quantity` stands below `id`.
     #[must_use]
     pub fn mentions(&self, id: ExprId, quantity: QuantityId) -> bool {
-        let mut found = false;
-        self.quantities(id, &mut |other| found |= other == quantity);
-        found
+        self.find(id, &mut |other| other == quantity)
+    }
+
+    /// Whether `is_it` holds for a quantity below `id`; those behind the first for which it does are not looked at.
+    fn find(&self, mut id: ExprId, is_it: &mut impl FnMut(QuantityId) -> bool) -> bool {
+        let mut waiting = Waiting::default();
+        loop {
+            match self.get(id) {
+                Expr::Number(..) | Expr::Constant(_) => {}
+                Expr::Quantity(quantity) => {
+                    if is_it(quantity) {
+                        return true;
+                    }
+                }
+                Expr::Negate(a) | Expr::Gas(_, _, a) | Expr::StandardPressure(a) | Expr::Call(_, a, None) => {
+                    id = a;
+                    continue;
+                }
+                Expr::Binary(_, a, b) | Expr::Call(_, a, Some(b)) => {
+                    waiting.push(b);
+                    id = a;
+                    continue;
+                }
+                Expr::State(function, _, [a, b, c]) => {
+                    if function.moisture.is_some() {
+                        waiting.push(c);
+                    }
+                    waiting.push(b);
+                    id = a;
+                    continue;
+                }
+            }
+            match waiting.pop() {
+                Some(next) => id = next,
+                None => return false,
+            }
+        }
+    }
+}
+
+/// Expressions that wait to be walked: a few without memory of their own, since most expressions are small and walked often.
+#[derive(Default)]
+struct Waiting {
+    few: [Option<ExprId>; 12],
+    n_few: usize,
+    more: Vec<ExprId>,
+}
+
+impl Waiting {
+    fn push(&mut self, id: ExprId) {
+        match self.few.get_mut(self.n_few) {
+            Some(place) => {
+                *place = Some(id);
+                self.n_few += 1;
+            }
+            None => self.more.push(id),
+        }
+    }
+
+    fn pop(&mut self) -> Option<ExprId> {
+        self.more.pop().or_else(|| {
+            self.n_few = self.n_few.checked_sub(1)?;
+            self.few[self.n_few]
+        })
     }
 }

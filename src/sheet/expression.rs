@@ -18,12 +18,20 @@ const CONSTANTS: [(&str, Constant); 5] = [
     ("g_n", Constant::StandardGravity),
 ];
 
+/// Whether a word is a constant of the language.
+pub(super) fn is_constant(word: &str) -> bool {
+    CONSTANTS.iter().any(|(constant, _)| *constant == word)
+}
+
 /// The constants that a gas offers as fields.
 const GAS_FIELDS: [&str; 4] = ["M", "R", "T_c", "p_c"];
 
 /// The functions that a gas with a saturation line offers, and what each takes.
 const GAS_FUNCTIONS: [(&str, GasFunction, &str); 2] =
     [("p_sat", GasFunction::SaturationPressure, "the temperature"), ("T_sat", GasFunction::SaturationTemperature, "the pressure")];
+
+/// What the site offers.
+const SITE_FIELDS: [&str; 2] = ["p", "altitude"];
 
 /// What a path stands for in an expression.
 pub(super) enum Target {
@@ -123,7 +131,12 @@ impl Reader<'_> {
         self.sheet
             .literals
             .push(ShownLiteral { number: folded(number).replace(['−', ' '], "-").replace("--", "-"), unit: value.shown.text() });
-        self.literals.push(LiteralInfo { dimension: value.shown.unit.dimension, kind: value.kind, gauge: value.gauge });
+        self.literals.push(LiteralInfo {
+            dimension: value.shown.unit.dimension,
+            kind: value.kind,
+            gauge: value.gauge,
+            unit: literal.unit.map(|unit| unit.span),
+        });
         let at = self.sheet.literals.len() as u32 - 1;
         let number = self.expr(Expr::Number(value.si, at), literal.span);
         if !value.gauge {
@@ -252,7 +265,14 @@ impl Reader<'_> {
     fn site_field(&mut self, path: &Path) -> Option<QuantityId> {
         let field = path.field.map_or("", |field| self.tree.names.text(field.name));
         if field != "p" && field != "altitude" {
-            self.report(code::unknown_field::finding(path.span(), "site", "site", field, &["p"], "`site.p`"));
+            self.report(code::unknown_field::finding(
+                path.span(),
+                "site",
+                "site",
+                field,
+                &nearest(field, SITE_FIELDS),
+                "`site.p`, `site.altitude`",
+            ));
             return None;
         }
         if !self.site.stated {
@@ -274,7 +294,7 @@ impl Reader<'_> {
         let id = self.gas_constant(gas, field);
         if id.is_none() {
             let offers = if matches!(self.sheet.gas(gas).model, GasModel::HumidAir(_)) {
-                "no constants: they change with its moisture"
+                "nothing here: `M` and `R` of humid air change with its moisture"
             } else {
                 "`M` and `R`; its critical point is not known here"
             };

@@ -61,9 +61,16 @@ impl Reader<'_> {
         if mixed && by.is_none() {
             let span = parts
                 .first()
-                .map_or(statement.span, |part| part.species.span)
+                .map_or(statement.span, |part| part.share.map_or(part.species.span, |share| share.span))
                 .to(parts.last().map_or(statement.span, |part| part.species.span));
             self.report(code::mixture_shares::basis(span));
+            sound = false;
+        }
+        let without: Vec<&GasPart> = parts.iter().filter(|part| part.share.is_none()).collect();
+        if let (true, true, Some(first), Some(last)) = (sound, mixed, without.first(), without.last()) {
+            let names: Vec<String> = without.iter().map(|part| format!("`{}`", part.species.text)).collect();
+            let span = if without.len() == parts.len() { first.species.span.to(last.species.span) } else { first.species.span };
+            self.report(code::mixture_shares::missing(span, &names, without.len() == parts.len()));
             sound = false;
         }
         if !sound {
@@ -136,6 +143,10 @@ impl Reader<'_> {
         if !value.shown.unit.dimension.is_none() {
             let dimension = value.shown.unit.dimension.describe();
             self.report(code::mixture_shares::share(literal.span, &format!("a share is a pure number, this is {}", code::a(&dimension))));
+            return None;
+        }
+        if value.si < 0.0 {
+            self.report(code::mixture_shares::share(literal.span, "it is negative"));
             return None;
         }
         Some(value.si)

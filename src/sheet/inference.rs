@@ -18,13 +18,13 @@ const MOST_COUPLED: usize = 2000;
 
 /// A known dimension times unknown ones, each to a power.
 #[derive(Clone, Debug, Default)]
-struct Symbolic {
-    base: Dimension,
-    unknown: Vec<(QuantityId, Rational)>,
+pub(super) struct Symbolic {
+    pub(super) base: Dimension,
+    pub(super) unknown: Vec<(QuantityId, Rational)>,
 }
 
 impl Symbolic {
-    fn times(mut self, other: &Self, power: Rational) -> Option<Self> {
+    pub(super) fn times(mut self, other: &Self, power: Rational) -> Option<Self> {
         self.base = self.base.times(other.base.power(power)?)?;
         for (id, exponent) in &other.unknown {
             let exponent = exponent.checked_mul(power)?;
@@ -51,32 +51,39 @@ impl Symbolic {
 }
 
 /// What relations say of unknown dimensions: each of these is a pure number.
-struct Equations<'a> {
-    sheet: &'a Sheet,
-    literals: &'a [super::reader::LiteralInfo],
-    undetermined: &'a [bool],
-    pure: Vec<Symbolic>,
+pub(super) struct Equations<'a> {
+    pub(super) sheet: &'a Sheet,
+    pub(super) literals: &'a [super::reader::LiteralInfo],
+    pub(super) undetermined: &'a [bool],
+    /// A written number whose dimension is asked for too; it counts as the quantity behind the last one.
+    pub(super) free_literal: Option<u32>,
+    pub(super) pure: Vec<Symbolic>,
+    /// How many statements do not hold whatever the unknown dimensions are.
+    pub(super) contradictions: usize,
 }
 
 impl Equations<'_> {
-    fn equal(&mut self, a: Option<&Symbolic>, b: Option<&Symbolic>) {
+    pub(super) fn equal(&mut self, a: Option<&Symbolic>, b: Option<&Symbolic>) {
         if let (Some(a), Some(b)) = (a, b)
             && let Some(ratio) = a.clone().times(b, Rational::whole(-1))
-            && !ratio.unknown.is_empty()
         {
-            self.pure.push(ratio);
+            if !ratio.unknown.is_empty() {
+                self.pure.push(ratio);
+            } else if !ratio.base.is_none() {
+                self.contradictions += 1;
+            }
         }
     }
 
     /// The dimension of an expression; `None` where it cannot be told.
-    fn walk(&mut self, id: ExprId) -> Option<Symbolic> {
+    pub(super) fn walk(&mut self, id: ExprId) -> Option<Symbolic> {
         let known = |base: Dimension| Some(Symbolic { base, unknown: Vec::new() });
+        let unknown = |id: QuantityId| Some(Symbolic { base: Dimension::NONE, unknown: vec![(id, Rational::ONE)] });
         match self.sheet.exprs.get(id) {
+            Expr::Number(_, literal) if self.free_literal == Some(literal) => unknown(QuantityId(self.undetermined.len() as u32)),
             Expr::Number(_, literal) => known(self.literals.get(literal as usize).map_or(Dimension::NONE, |info| info.dimension)),
             Expr::Constant(constant) => known(constant.dimension()),
-            Expr::Quantity(quantity) if self.undetermined[quantity.0 as usize] => {
-                Some(Symbolic { base: Dimension::NONE, unknown: vec![(quantity, Rational::ONE)] })
-            }
+            Expr::Quantity(quantity) if self.undetermined[quantity.0 as usize] => unknown(quantity),
             Expr::Quantity(quantity) => known(self.sheet.quantity(quantity).dimension),
             Expr::Negate(inner) => self.walk(inner),
             Expr::Binary(op, a, b) => {
@@ -140,7 +147,14 @@ impl Reader<'_> {
         if !self.undetermined.contains(&true) {
             return;
         }
-        let mut equations = Equations { sheet: &self.sheet, literals: &self.literals, undetermined: &self.undetermined, pure: Vec::new() };
+        let mut equations = Equations {
+            sheet: &self.sheet,
+            literals: &self.literals,
+            undetermined: &self.undetermined,
+            free_literal: None,
+            pure: Vec::new(),
+            contradictions: 0,
+        };
         for relation in &self.sheet.relations {
             if matches!(relation.origin, RelationOrigin::Law(..) | RelationOrigin::Atmosphere) {
                 continue;
@@ -155,6 +169,7 @@ impl Reader<'_> {
             }
             let Some(dimension) = dimension.or((!self.poisoned[at]).then_some(Dimension::NONE)) else { continue };
             self.undetermined[at] = false;
+            self.inferred.push(QuantityId(at as u32));
             let quantity = &mut self.sheet.quantities[at];
             quantity.dimension = dimension;
             quantity.kind =
@@ -164,7 +179,7 @@ impl Reader<'_> {
 }
 
 /// The unknown dimensions of `equations`, by quantity.
-fn solve(mut equations: Vec<Symbolic>, n_quantities: usize) -> Vec<Option<Dimension>> {
+pub(super) fn solve(mut equations: Vec<Symbolic>, n_quantities: usize) -> Vec<Option<Dimension>> {
     let mut found: Vec<Option<Dimension>> = vec![None; n_quantities];
     let mut uses: Vec<Vec<u32>> = vec![Vec::new(); n_quantities];
     for (at, equation) in equations.iter().enumerate() {

@@ -1,6 +1,7 @@
 //! The laws of a state: the relations that tie its properties.
 
 use crate::diagnostic::{Diagnostic, Span, code};
+use crate::gas::saturation::has_saturation_line;
 use crate::gas::transport::Transport;
 use crate::syntax::{BinaryOp, Function};
 use crate::units::constants::STANDARD_STATE_PRESSURE;
@@ -64,7 +65,8 @@ impl Reader<'_> {
         if let Some(species) = caloric
             && used.iter().any(|property| property.is_caloric())
         {
-            return Some(code::outside_model_range::no_data(owner.span, species));
+            let by_equation = entry.model.is_ideal() && entry.gas.species().is_some_and(has_saturation_line);
+            return Some(code::outside_model_range::no_data(owner.span, species, by_equation));
         }
         let is_humid = matches!(entry.model, GasModel::HumidAir(_));
         let transport = if is_humid { None } else { Transport::of(&entry.gas) };

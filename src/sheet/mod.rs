@@ -20,6 +20,7 @@ mod slip;
 mod state;
 mod value;
 mod write;
+mod wrong_unit;
 
 pub use expr::{Constant, Expr, ExprId, Exprs, GasFunction, StateFunction};
 pub use model::{

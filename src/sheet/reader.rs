@@ -1,5 +1,6 @@
 //! Reads a tree: settles names, units, dimensions and kinds, and turns states into relations.
 
+use std::cell::Cell;
 use std::collections::{BTreeMap, HashMap};
 
 use crate::diagnostic::{Diagnostic, Span, code};
@@ -42,6 +43,8 @@ pub(super) struct LiteralInfo {
     pub(super) kind: Kind,
     /// It stands for a gauge reading, to which the pressure of the site is added.
     pub(super) gauge: bool,
+    /// Where its unit stands.
+    pub(super) unit: Option<Span>,
 }
 
 /// The work of reading one sheet.
@@ -57,6 +60,12 @@ pub(super) struct Reader<'a> {
     pub(super) literals: Vec<LiteralInfo>,
     /// Beside [`Sheet::quantities`]: whether the dimension has still to be found.
     pub(super) undetermined: Vec<bool>,
+    /// Quantities whose dimension the relations force, in order.
+    pub(super) inferred: Vec<QuantityId>,
+    /// Statements whose terms are not of one dimension.
+    pub(super) mismatches: Vec<super::wrong_unit::Mismatch>,
+    /// Statements that may still be looked at for the unit behind them.
+    pub(super) statements_left: Cell<usize>,
     /// Beside [`Sheet::quantities`]: whether its line, or a line that it hangs on, is in error.
     pub(super) poisoned: Vec<bool>,
     /// Beside [`Sheet::states`].
@@ -112,6 +121,9 @@ pub fn read(tree: &Tree, text: &str) -> (Sheet, Vec<Diagnostic>) {
         pending_live: Vec::new(),
         literals: Vec::new(),
         undetermined: Vec::new(),
+        inferred: Vec::new(),
+        mismatches: Vec::new(),
+        statements_left: Cell::new(super::wrong_unit::MOST_STATEMENTS),
         poisoned: Vec::new(),
         poisoned_states: Vec::new(),
         site: Site::default(),
@@ -134,6 +146,7 @@ pub fn read(tree: &Tree, text: &str) -> (Sheet, Vec<Diagnostic>) {
     reader.infer_kinds();
     reader.check_relations();
     reader.check_clauses();
+    reader.wrong_units();
     reader.settle_shown_units();
     reader.drop_what_hangs_on_errors();
     // In a sheet with errors every slip may be the shadow of one.

@@ -7,7 +7,7 @@ use crate::units::{self, Dimension};
 
 use super::reader::Reader;
 use super::value::folded;
-use super::{Constant, Expr, ExprId, Kind, Origin, QuantityId, RelationOrigin, TypedNumber};
+use super::{Constant, Expr, ExprId, Kind, Origin, Quantity, QuantityId, RelationOrigin, TypedNumber};
 
 /// A constant given by hand may differ from that of the species by this much before it is told: the spread of published
 /// molar masses of one gas.
@@ -50,6 +50,13 @@ const USUAL_ABSOLUTE: Usual = usual(Dimension::PRESSURE, 1.5e3, 1e8, "absolute p
 const USUAL_GAUGE: Usual = usual(Dimension::PRESSURE, 1.5e3, 1e8, "gauge pressure", "15 mbar to 1000 bar");
 const USUAL_DIFFERENCE: Usual = usual(Dimension::PRESSURE, 0.1, 1e8, "pressure difference", "0.1 Pa to 1000 bar");
 
+/// A name without underscores, its first letter as it is, since that is the symbol (`t_e` is no `T_e`), the others small.
+fn folded_name(name: &str) -> impl Iterator<Item = char> {
+    let mut letters = name.chars().filter(|letter| *letter != '_');
+    let symbol = letters.next();
+    symbol.into_iter().chain(letters.flat_map(char::to_lowercase))
+}
+
 impl Reader<'_> {
     /// Looks for slips. Called when everything else is settled.
     pub(super) fn slips(&mut self) {
@@ -84,12 +91,56 @@ impl Reader<'_> {
             } else {
                 USUAL.iter().find(|usual| usual.dimension == quantity.dimension)
             };
+            if let Some(finding) = self.gauge_for_absolute(QuantityId(at as u32)) {
+                self.report(finding);
+                continue;
+            }
+            let quantity = &self.sheet.quantities[at];
+            let Some(reading) = &quantity.reading else { continue };
             let Some(usual) = usual else { continue };
             if reading.si.abs() < usual.low || reading.si.abs() > usual.high {
                 let finding = code::unusual_size::finding(quantity.span, &quantity.name, &reading.text, usual.word, usual.range);
                 self.report(finding);
             }
         }
+    }
+
+    /// An absolute pressure of a state below the atmosphere of the site, though nothing says that a vacuum is meant: the reading of a
+    /// gauge, very likely.
+    fn gauge_for_absolute(&self, id: QuantityId) -> Option<crate::diagnostic::Diagnostic> {
+        /// Part of the pressure of the site below which a vacuum is deep, and no gauge was read.
+        const DEEP: f64 = 0.1;
+        /// Words by which a low pressure is meant (common practice).
+        const MEANT: &[&str] = &[
+            "vacuum",
+            "suction",
+            "evacu",
+            "partial",
+            "vapour",
+            "vapor",
+            "atmospher",
+            "ambient",
+            "baromet",
+            "saturat",
+            "air pressure",
+            "negative",
+        ];
+        let (quantity, site) = (self.sheet.quantity(id), self.site.p_pa?);
+        let reading = quantity.reading.as_ref()?;
+        let is_absolute = quantity.dimension == Dimension::PRESSURE && quantity.shown.basis == Some(Basis::Absolute);
+        if !is_absolute || reading.si >= site * (1.0 - super::value::WEATHER) || reading.si < DEEP * site {
+            return None;
+        }
+        let said = format!("{} {}", quantity.description, quantity.source).to_lowercase();
+        let fixes_a_state = self.sheet.relations.iter().any(|relation| {
+            matches!(relation.origin, RelationOrigin::At(_, super::Property::P))
+                && self.sheet.exprs.get(relation.right) == Expr::Quantity(id)
+        });
+        if !fixes_a_state || MEANT.iter().any(|word| said.contains(word)) {
+            return None;
+        }
+        let kpa = |pa: f64| format!("{} kPa abs", units::write_figures(pa / 1000.0, 4));
+        Some(code::unusual_size::vacuum(quantity.span, &quantity.name, &reading.text, &kpa(site), &kpa(reading.si + site)))
     }
 
     /// Inputs that nothing uses and results that nothing asks for.
@@ -141,25 +192,33 @@ impl Reader<'_> {
         }
     }
 
-    /// Names that differ only in underscores or case of more than a letter: `T_e` and `Te`.
+    /// Names that differ only in underscores or, behind their symbol, in case: `T_e` and `Te`, `Te` and `TE`.
     fn twins(&mut self) {
-        let mut folded_names: Vec<(String, QuantityId)> = self
-            .sheet
-            .quantities
-            .iter()
-            .enumerate()
-            .filter(|(_, quantity)| matches!(quantity.origin, Origin::Given | Origin::Unknown | Origin::Let))
-            .map(|(at, quantity)| (quantity.name.replace('_', ""), QuantityId(at as u32)))
-            .collect();
-        folded_names.sort();
-        for pair in folded_names.windows(2) {
-            let [(first, a), (second, b)] = pair else { continue };
-            if first == second {
-                let (a, b) = (self.sheet.quantity(*a), self.sheet.quantity(*b));
-                let finding = code::twin_names::finding(b.span, &b.name, &a.name, a.span);
-                self.report(finding);
+        let declared = |quantity: &Quantity| matches!(quantity.origin, Origin::Given | Origin::Unknown | Origin::Let);
+        let mut names: Vec<QuantityId> =
+            (0..self.sheet.quantities.len() as u32).map(QuantityId).filter(|id| declared(self.sheet.quantity(*id))).collect();
+        let folded = |id: &QuantityId| folded_name(&self.sheet.quantity(*id).name);
+        names.sort_by(|a, b| folded(a).cmp(folded(b)).then(a.cmp(b)));
+        let mut twins = Vec::new();
+        for pair in names.windows(2) {
+            let [a, b] = pair else { continue };
+            if folded(a).eq(folded(b)) && self.are_twins(*a, *b) {
+                twins.push((*a, *b));
             }
         }
+        for (a, b) in twins {
+            let (a, b) = (self.sheet.quantity(a), self.sheet.quantity(b));
+            let finding = code::twin_names::finding(b.span, &b.name, &a.name, a.span);
+            self.report(finding);
+        }
+    }
+
+    /// Whether two names that are alike but for underscores and case look like one. A capital behind an underscore is an index of its
+    /// own (`q_n` and `q_N`), and so is one of a quantity of another kind.
+    fn are_twins(&self, a: QuantityId, b: QuantityId) -> bool {
+        let (a, b) = (self.sheet.quantity(a), self.sheet.quantity(b));
+        let same_case = a.name.replace('_', "") == b.name.replace('_', "");
+        same_case || a.dimension == b.dimension && !(a.name.contains('_') && b.name.contains('_'))
     }
 
     /// Molar masses and gas constants given by hand for a gas that the sheet names.
@@ -302,7 +361,15 @@ impl Reader<'_> {
         let mut rest = behind.trim_start_matches(['*', '`', '_', '$']).trim_start();
         let connector = ["=", "≈", "is", "of", ":"].into_iter().find(|connector| rest.starts_with(connector))?;
         rest = rest[connector.len()..].trim_start();
-        let digits_end = rest.find(|c: char| !(c.is_ascii_digit() || c == '.' || c == '-' || c == '−')).unwrap_or(rest.len());
+        let mut digits_end = rest.find(|c: char| !(c.is_ascii_digit() || c == '.' || c == '-' || c == '−')).unwrap_or(rest.len());
+        // `2.6e-5`
+        if let Some(exponent) = rest[digits_end..].strip_prefix(['e', 'E']) {
+            let sign = exponent.chars().next().filter(|c| matches!(c, '-' | '+' | '−')).map_or(0, char::len_utf8);
+            let figures = exponent[sign..].bytes().take_while(u8::is_ascii_digit).count();
+            if digits_end > 0 && figures > 0 {
+                digits_end += 1 + sign + figures;
+            }
+        }
         let digits = rest[..digits_end].trim_end_matches('.');
         let value: f64 = digits.replace('−', "-").parse().ok()?;
         let after = &rest[digits.len()..];

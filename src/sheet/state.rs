@@ -124,7 +124,9 @@ fn dependent(model: &GasModel, at: &[Property]) -> Option<(String, &'static str)
     if at.len() < 2 {
         return None;
     }
-    let names = at.iter().map(|property| format!("`{}`", property.row().field)).collect::<Vec<_>>().join(" and ");
+    let mut names: Vec<String> = at.iter().map(|property| format!("`{}`", property.row().field)).collect();
+    let last = names.pop().unwrap_or_default();
+    let names = format!("{} and {last}", names.join(", "));
     if at.iter().all(of_density) {
         return Some((names, "specific volume is one over density: one determines the other"));
     }

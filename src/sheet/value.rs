@@ -6,12 +6,13 @@ use crate::syntax::{Basis, Literal, Named, ReferenceName, Shape, Statement, Stat
 use crate::units::constants::MOLAR_GAS_CONSTANT;
 use crate::units::{self, Dimension, ReferenceVolume, Unit, UnitErrorKind, math};
 
-use super::reader::Reader;
+use super::expression::is_constant;
+use super::reader::{Meaning, Reader};
 use super::{Expr, Kind, Origin, QuantityId, Reading, ReferenceConditions, RelationOrigin, ShownUnit, StatedUncertainty};
 
 /// Pressure of a place against the standard atmosphere of its altitude: beyond this the two are told to contradict each
 /// other. Weather moves a barometer by some 3 % about its mean (common practice, no source).
-const WEATHER: f64 = 0.04;
+pub(super) const WEATHER: f64 = 0.04;
 
 /// A number with its unit and basis in SI.
 #[derive(Clone, Debug)]
@@ -33,13 +34,23 @@ impl Reader<'_> {
                 let offset = token.start as usize + error.offset;
                 let place = Span::new(offset, offset + error.len);
                 let finding = match &error.kind {
-                    UnitErrorKind::Unknown { word, near, help } => {
+                    UnitErrorKind::Unknown { word, near, help, cure } => {
                         let names_a_quantity =
                             self.tree.names.find(text).is_some_and(|name| self.names.contains_key(&name) || self.is_declared(name));
-                        if names_a_quantity {
+                        let owner = text.split_once('.').and_then(|(owner, _)| self.tree.names.find(owner));
+                        let names_a_field =
+                            owner.is_some_and(|owner| matches!(self.names.get(&owner), Some((Meaning::Gas(_) | Meaning::State(_), _))));
+                        if names_a_quantity || names_a_field || is_constant(text) {
                             code::unknown_unit::missing_multiplication(token, text, self.number_before(token))
                         } else {
-                            code::unknown_unit::finding(place, word, near, help.as_deref())
+                            let finding = code::unknown_unit::finding(place, word, near, help.as_deref());
+                            match cure {
+                                Some(cure) => {
+                                    let basis = cure.basis.filter(|_| !self.has_basis_behind(token));
+                                    code::unknown_unit::cured(finding, place, &cure.unit, basis, cure.certain)
+                                }
+                                None => finding,
+                            }
                         }
                     }
                     UnitErrorKind::Power { .. } => code::power_too_high::unit(token, text),
@@ -81,6 +92,11 @@ impl Reader<'_> {
             unit.factor *= math::pow(moles_per_volume, power.to_f64());
         }
         Ok(unit)
+    }
+
+    fn has_basis_behind(&self, token: Span) -> bool {
+        let next = self.text.get(token.end as usize..).unwrap_or("").split_whitespace().next();
+        matches!(next, Some("abs" | "gauge" | "diff"))
     }
 
     fn is_declared(&self, name: crate::syntax::Name) -> bool {
@@ -167,7 +183,15 @@ impl Reader<'_> {
                 let kpa = |pa: f64| format!("{} kPa abs", units::write_figures(pa / 1000.0, 4));
                 [kpa(unit.to_si(literal.value)), kpa(unit.to_si(literal.value) + site)]
             });
-            self.report(code::pressure_without_basis::finding(Span { start: literal.span.start, end: text.span.end }, &written, meanings));
+            let (span, pressure) = (Span { start: literal.span.start, end: text.span.end }, unit.to_si(literal.value));
+            let finding = if pressure < 0.0 {
+                code::pressure_without_basis::negative(span, &written)
+            } else {
+                let finding = code::pressure_without_basis::finding(span, &written, meanings);
+                let is_vacuum = self.site.p_pa.is_some_and(|site| pressure < site * (1.0 - WEATHER));
+                if is_vacuum { code::pressure_without_basis::vacuum(finding) } else { finding }
+            };
+            self.report(finding);
             return None;
         }
         let basis = self.basis(text, &unit, true)?;
@@ -334,6 +358,13 @@ impl Reader<'_> {
             self.references_missing[2] |= at == 1;
             return;
         };
+        if (t.shown.unit.dimension, p.shown.unit.dimension) == (Dimension::PRESSURE, Dimension::TEMPERATURE) {
+            let (first, second) = (folded(temperature.span.of(self.text)), folded(pressure.span.of(self.text)));
+            self.report(code::dimension_mismatch::reference_order(temperature.span.to(pressure.span), &format!("{second}, {first}")));
+            self.references_missing[at] = true;
+            self.references_missing[2] |= at == 1;
+            return;
+        }
         for (value, literal, dimension, word) in
             [(&t, temperature, Dimension::TEMPERATURE, "a temperature"), (&p, pressure, Dimension::PRESSURE, "a pressure")]
         {

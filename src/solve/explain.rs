@@ -17,8 +17,21 @@ const MOST_NAMES: usize = 8;
 /// A value of a quantity for a finding: four figures and its unit.
 pub(super) fn shown(sheet: &Sheet, id: QuantityId, si: f64, site_pa: f64) -> String {
     let quantity = sheet.quantity(id);
-    let value = units::write_figures(quantity.shown.from_si(si, site_pa), 5);
+    let value = quantity.shown.from_si(si, site_pa);
+    // Nothing is exactly zero to five figures: it is zero.
+    let value = if value == 0.0 { "0".to_owned() } else { units::write_figures(value, 5) };
     format!("{value} {}", quantity.shown.text()).trim_end().to_owned()
+}
+
+/// Values of a quantity from the smallest to the largest: `1 m, 2 m and 3 m`.
+pub(super) fn shown_all(sheet: &Sheet, id: QuantityId, values: &[f64], site_pa: f64) -> String {
+    let mut sorted = values.to_vec();
+    sorted.sort_by(f64::total_cmp);
+    let texts: Vec<String> = sorted.into_iter().map(|si| shown(sheet, id, si, site_pa)).collect();
+    match texts.as_slice() {
+        [first @ .., last] if !first.is_empty() => format!("{} and {last}", first.join(", ")),
+        _ => texts.concat(),
+    }
 }
 
 /// `a`, `b` and `c`, cut where they are many.
@@ -57,7 +70,8 @@ pub(super) fn missing(sheet: &Sheet, part: &Part, quantities: &[QuantityId], rel
         };
         let needs = sheet.gas(entry.gas).degrees_of_freedom();
         let taken: Vec<Property> = entry.at.iter().map(|(property, _)| *property).collect();
-        let thermal = [Property::T, Property::H, Property::U].iter().any(|property| taken.contains(property));
+        let ideal = sheet.gas(entry.gas).model.is_ideal();
+        let thermal = ideal && [Property::T, Property::H, Property::U].iter().any(|property| taken.contains(property));
         let is_moist = taken.iter().any(|property| property.is_moisture());
         let moisture = [Property::RelativeHumidity, Property::DewPoint, Property::HumidityRatio];
         let moisture = moisture.into_iter().filter(|_| needs == 3 && !is_moist);
@@ -111,6 +125,9 @@ pub(super) fn conflict(
 ) -> Diagnostic {
     let entry = &sheet.relations[relation];
     let (difference, allowed) = (in_unit(sheet, entry.left, difference), in_unit(sheet, entry.left, allowed));
+    // A state that takes part with a third property is the place of the mistake, whatever line the conflict shows on.
+    let relation = third_property(sheet, relation, part).unwrap_or(relation);
+    let entry = &sheet.relations[relation];
     let what = what_of(sheet, relation);
     let mut places: Vec<(Span, String)> = Vec::new();
     let state = match entry.origin {
@@ -143,6 +160,18 @@ pub(super) fn conflict(
         ));
     }
     finding
+}
+
+/// The last property of a state that is fixed by more than two, where the surplus relation of `part` is a line of the sheet.
+fn third_property(sheet: &Sheet, relation: usize, part: &[usize]) -> Option<usize> {
+    if matches!(sheet.relations[relation].origin, RelationOrigin::At(..) | RelationOrigin::Law(..)) {
+        return None;
+    }
+    part.iter().copied().find(|other| {
+        let RelationOrigin::At(state, property) = sheet.relations[*other].origin else { return false };
+        let fixed = &sheet.state(state).at;
+        fixed.len() > 2 && fixed.last().is_some_and(|(last, _)| *last == property)
+    })
 }
 
 /// A relation that was not needed and agrees.
@@ -195,16 +224,16 @@ pub(super) fn fault(sheet: &Sheet, fault: &Fault, relations: &[usize], quantitie
     let mut finding = match fault {
         Fault::Silent => return None,
         Fault::Several { quantity, roots } => {
-            let values: Vec<String> = roots.iter().map(|root| shown(sheet, *quantity, *root, site_pa)).collect();
             let name = &sheet.quantity(*quantity).name;
-            let example = values.last().cloned().unwrap_or_default();
+            let largest = roots.iter().copied().max_by(f64::total_cmp);
+            let example = largest.map_or(String::new(), |root| shown(sheet, *quantity, root, site_pa));
             let span = sheet.quantity(*quantity).span;
             let choose = if matches!(sheet.quantity(*quantity).origin, Origin::Unknown) {
                 format!("add `near {example}` or bounds `within … .. …` to the line of `{name}`")
             } else {
                 format!("declare `unknown {name} … near {example}` or bound one of the quantities of these lines")
             };
-            code::several_roots::finding(span, name, &values.join(" and "), roots.len(), &choose)
+            code::several_roots::finding(span, name, &shown_all(sheet, *quantity, roots, site_pa), roots.len(), &choose)
         }
         Fault::Outside { quantity, value, low, high } => {
             let end = |bound: f64| if bound.is_finite() { shown(sheet, *quantity, bound, site_pa) } else { String::new() };
@@ -344,6 +373,9 @@ pub(super) fn undefined(sheet: &Sheet, values: &[f64], expr: ExprId, fallback: S
 /// A value that a quantity cannot have; `None` where it can.
 pub(super) fn impossible(sheet: &Sheet, id: QuantityId, si: f64, site_pa: f64) -> Option<Diagnostic> {
     let quantity = sheet.quantity(id);
+    if si < 0.0 && quantity.dimension == Dimension::TEMPERATURE && quantity.kind == Kind::Either && quantity.origin == Origin::Unknown {
+        return Some(code::below_absolute_zero::perhaps(quantity.span, &quantity.name, &shown(sheet, id, si, site_pa)));
+    }
     if si >= 0.0 || !super::physics::cannot_be_negative(quantity) {
         return None;
     }

@@ -9,6 +9,9 @@ use super::plan::{Block, Bounds, Plan, Segment};
 use super::scalar::{self, Function as _, Sample};
 use super::tape::Slot;
 
+/// Blocks of more unknowns than this, each with a guess, are not searched for other solutions.
+const MOST_UNKNOWNS_SEARCHED: usize = 20;
+
 /// Starts that are tried for a block of several unknowns.
 const MOST_STARTS: u32 = 24;
 
@@ -25,6 +28,8 @@ pub(super) struct Solved {
     pub(super) branch: Option<usize>,
     /// Other values of the unknown that satisfy the relations, which `near` set aside.
     pub(super) others: Vec<f64>,
+    /// The unknown of the block that the others are values of.
+    pub(super) told: usize,
     /// The negative root that was left out because the quantity is not negative.
     factors: Option<Factors>,
 }
@@ -54,6 +59,8 @@ pub(super) struct Evaluation<'a> {
     tangents: Vec<f64>,
     magnitudes: Vec<f64>,
     adjoints: Vec<f64>,
+    /// It follows a solution that was judged: other solutions of its blocks are not looked for again.
+    repeated: bool,
 }
 
 /// Evaluates a plan at the inputs of its sheet.
@@ -66,6 +73,7 @@ pub(super) fn evaluate<'a>(sheet: &Sheet, plan: &'a Plan, inputs: &[f64]) -> Eva
         tangents: vec![0.0; n],
         magnitudes: vec![0.0; n],
         adjoints: vec![0.0; n],
+        repeated: false,
     };
     for segment in &plan.segments {
         match segment {
@@ -88,6 +96,7 @@ impl<'a> Evaluation<'a> {
     /// block was solved.
     pub(super) fn again(&mut self, sheet: &Sheet, inputs: &[f64], nominal: &[f64]) -> bool {
         let plan = self.plan;
+        self.repeated = true;
         for segment in &plan.segments {
             match segment {
                 Segment::Straight(range) => plan.tape.evaluate(range.clone(), inputs, &mut self.values),
@@ -236,6 +245,7 @@ impl Evaluation<'_> {
             residual,
             branch,
             others: inside.into_iter().filter(|root| *root != chosen).collect(),
+            told: 0,
             factors: Factors::of(&[Entry { row: 0, column: 0, value: sample.slope }], &[1.0], &mut Symbolic::default()),
         })
     }
@@ -315,12 +325,16 @@ impl Evaluation<'_> {
             starts += 1;
             let start = newton::start(&unknowns, number);
             let run = newton::run(&mut InBlock { evaluation: self, block, inputs, unknowns: &unknowns }, &unknowns, &start);
-            evaluations += run.evaluations;
+            // The search for others is no part of the way to the one that is meant.
+            if !guided || solutions.is_empty() {
+                evaluations += run.evaluations;
+            }
             if run.has_converged() {
                 if !solutions.iter().any(|known| newton::same(&known.x, &run.x, &unknowns)) {
                     solutions.push(run);
                 }
-                if guided {
+                // With a guess for all of them the first solution is the one that is meant; others are looked for to be told.
+                if guided && (self.repeated || unknowns.len() > MOST_UNKNOWNS_SEARCHED) {
                     break;
                 }
             } else if best.as_ref().is_none_or(|best| run.residual < best.residual) {
@@ -333,10 +347,19 @@ impl Evaluation<'_> {
                 .zip(&block.bounds)
                 .all(|(x, bounds)| *x >= 0.0 || bounds.low.is_some() || !physics::is_taken_positive(sheet.quantity(bounds.quantity)))
         };
-        if solutions.iter().any(positive) {
+        // A guess that leads to a negative length means it.
+        let means_negative = guided && solutions.first().is_some_and(|first| !positive(first));
+        if !means_negative && solutions.iter().any(positive) {
             solutions.retain(positive);
         }
-        let Some(solution) = solutions.first().cloned() else {
+        let distance = |run: &newton::Run| -> f64 {
+            let off = |(x, unknown): (&f64, &Unknown)| unknown.near.map_or(0.0, |near| ((x - near) / near.abs().max(unknown.size)).abs());
+            run.x.iter().zip(&unknowns).map(off).fold(0.0, f64::max)
+        };
+        let nearest = solutions.iter().enumerate().min_by(|a, b| distance(a.1).total_cmp(&distance(b.1))).map(|(at, _)| at);
+        // From a guess for all of them the way itself leads to the one that is meant.
+        let chosen = if guided && !solutions.is_empty() { Some(0) } else { nearest };
+        let Some(solution) = chosen.map(|at| solutions.swap_remove(at)) else {
             let (worst, residual, x) = best.map_or((0, f64::INFINITY, Vec::new()), |best| (best.worst, best.residual, best.x));
             let at_bound = block
                 .unknowns
@@ -348,15 +371,19 @@ impl Evaluation<'_> {
                 .collect();
             return Err(Fault::NotConverged { starts, worst, residual, at_bound, best: x });
         };
-        if solutions.len() > 1 && !guided && !unknowns.iter().any(|unknown| unknown.near.is_some()) {
-            // The unknown in which the solutions differ most tells them apart.
+        // The unknown in which the solutions differ most tells them apart.
+        let telling = |solutions: &[newton::Run]| {
             let spread = |at: usize| {
-                let values = solutions.iter().map(|solution| solution.x[at]);
+                let values = solutions.iter().map(|other| other.x[at]).chain([solution.x[at]]);
                 let (low, high) = values.fold((f64::INFINITY, f64::NEG_INFINITY), |(low, high), x| (low.min(x), high.max(x)));
                 (high - low) / unknowns[at].size.max(high.abs())
             };
-            let at = (0..unknowns.len()).max_by(|a, b| spread(*a).total_cmp(&spread(*b))).unwrap_or(0);
-            let mut roots: Vec<f64> = solutions.iter().map(|solution| solution.x[at]).collect();
+            (0..unknowns.len()).max_by(|a, b| spread(*a).total_cmp(&spread(*b))).unwrap_or(0)
+        };
+        let at = telling(&solutions);
+        let others: Vec<f64> = solutions.iter().map(|other| other.x[at]).collect();
+        if !others.is_empty() && !guided && !unknowns.iter().any(|unknown| unknown.near.is_some()) {
+            let mut roots: Vec<f64> = others.iter().copied().chain([solution.x[at]]).collect();
             roots.sort_by(f64::total_cmp);
             return Err(Fault::Several { quantity: block.unknowns[at].0, roots });
         }
@@ -368,7 +395,7 @@ impl Evaluation<'_> {
         system.jacobian(&mut entries);
         let scales: Vec<f64> = solution.x.iter().zip(&unknowns).map(|(x, unknown)| x.abs().max(1e-3 * unknown.size)).collect();
         let factors = Factors::of(&entries, &scales, &mut Symbolic::default());
-        Ok(Solved { how: "Newton's method", evaluations, residual: solution.residual, branch: None, others: Vec::new(), factors })
+        Ok(Solved { how: "Newton's method", evaluations, residual: solution.residual, branch: None, others, told: at, factors })
     }
 
     /// Carries the tangents of inputs through all segments. `tangents` holds those of the inputs and zeros.

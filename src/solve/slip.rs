@@ -92,7 +92,11 @@ fn ratios_by_hand(sheet: &Sheet, values: &[f64], findings: &mut Vec<Diagnostic>)
         }
         let off = sheet.states.iter().filter_map(|state| {
             let (_, t) = state.properties.iter().find(|(property, _)| *property == Property::T)?;
-            let gas = &sheet.gas(state.gas).gas;
+            let gas = &sheet.gas(state.gas);
+            if !gas.model.is_ideal() {
+                return None;
+            }
+            let gas = &gas.gas;
             gas.has_caloric().ok()?;
             let cp = gas.cp_j_kg_k(values[t.0 as usize]);
             let k = cp / (cp - gas.gas_constant_j_kg_k());

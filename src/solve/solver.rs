@@ -218,15 +218,13 @@ fn faults(sheet: &Sheet, plan: &Plan, evaluation: &Evaluation, values: &[f64], s
                             }
                         }
                         if !solved.others.is_empty() && findings.len() == before {
-                            let id = plan.blocks[*at].unknowns[0].0;
-                            let others: Vec<String> =
-                                solved.others.iter().map(|other| explain::shown(sheet, id, *other, site_pa)).collect();
+                            let id = plan.blocks[*at].unknowns[solved.told].0;
                             let chosen = explain::shown(sheet, id, values[id.0 as usize], site_pa);
                             findings.push(code::several_roots::chosen(
                                 sheet.quantity(id).span,
                                 &sheet.quantity(id).name,
                                 &chosen,
-                                &others.join(" and "),
+                                &explain::shown_all(sheet, id, &solved.others, site_pa),
                             ));
                         }
                     }

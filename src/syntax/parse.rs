@@ -12,7 +12,9 @@ use super::statement::resolve;
 use super::tree::{ProsePiece, Statement, StatementKind, Text, Tree};
 use super::word::STATEMENT_WORDS_NOT_OFFERED;
 use super::{character, head};
-use crate::diagnostic::code::{head_misplaced, missing_text, not_utf8, too_long, too_many, too_many_errors, word_not_offered};
+use crate::diagnostic::code::{
+    head_misplaced, missing_text, not_utf8, reserved_name, too_long, too_many, too_many_errors, word_not_offered,
+};
 use crate::diagnostic::{Diagnostic, Span, finding};
 
 /// The mark that some editors put before the text of a file.
@@ -56,9 +58,23 @@ pub fn parse(text: &str) -> (Tree, Vec<Diagnostic>) {
         let mut sheet = SheetReader { text, tree: &mut tree, findings: &mut findings, hidden: &hidden, omitted: 0, live_values: 0 };
         sheet.lines(&lines.lines);
         let omitted = sheet.omitted;
+        uses_of_reserved_names(text, &mut findings);
         return (tree, capped(findings, omitted));
     }
     (tree, capped(findings, 0))
+}
+
+/// Takes out what is told of the uses of a word that was declared as a name and cannot be one: the declaration is the mistake.
+fn uses_of_reserved_names(text: &str, findings: &mut Vec<Diagnostic>) {
+    let declared: Vec<Span> = findings.iter().filter(|finding| reserved_name::declares(finding)).map(|finding| finding.span).collect();
+    if declared.is_empty() || declared.len() > MOST_ERRORS {
+        return;
+    }
+    let words: std::collections::BTreeSet<&str> = declared.iter().map(|span| span.of(text)).collect();
+    findings.retain(|finding| {
+        let follows = matches!(finding.code, reserved_name::CODE | word_not_offered::CODE);
+        !follows || reserved_name::declares(finding) || !words.contains(finding.span.of(text))
+    });
 }
 
 /// The findings in the order of the text; of errors beyond the limit only their number is told.

@@ -58,7 +58,9 @@ impl Reader<'_> {
 
     /// `± A …`. `None` where a finding says why it is none.
     pub(crate) fn uncertainty(&mut self, pair: Pair<'_, Rule>, value: &Literal) -> Option<Uncertainty> {
-        let span = self.span(&pair);
+        let whole = self.span(&pair);
+        // The grammar takes the blanks behind the width with it.
+        let span = Span { end: whole.start + self.at(whole).trim_end().len() as u32, ..whole };
         if let Some(exact) = value.exact {
             self.findings.push(exact_with_uncertainty::finding(exact, span));
         }

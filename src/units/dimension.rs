@@ -113,6 +113,9 @@ impl Dimension {
     /// The dimension of a product; `None` beyond the limit of powers.
     #[must_use]
     pub fn times(self, other: Self) -> Option<Self> {
+        if other.is_none() {
+            return Some(self);
+        }
         self.combine(|base, own| own.checked_add(other.exponents[base]))
     }
 
@@ -125,7 +128,10 @@ impl Dimension {
     /// The dimension of a power; `None` beyond the limit of powers.
     #[must_use]
     pub fn power(self, exponent: Rational) -> Option<Self> {
-        self.combine(|_, own| own.checked_mul(exponent))
+        if exponent == Rational::ONE {
+            return Some(self);
+        }
+        self.combine(|_, own| if own.is_zero() { Some(own) } else { own.checked_mul(exponent) })
     }
 
     /// Makes each exponent anew; `None` where one does not fit, is above 24 in size or has a denominator above 64.
@@ -133,6 +139,9 @@ impl Dimension {
         let mut exponents = self.exponents;
         for (base, exponent) in exponents.iter_mut().enumerate() {
             let made = make(base, *exponent)?;
+            if made == *exponent {
+                continue;
+            }
             let largest = Rational::whole(LARGEST_EXPONENT);
             if made > largest || made.checked_neg()? > largest || made.den() > LARGEST_DENOMINATOR {
                 return None;

@@ -9,6 +9,19 @@ pub(super) struct Suggestion {
     pub(super) near: Vec<&'static str>,
     /// What to write instead.
     pub(super) help: Option<String>,
+    /// The unit, with its basis, that the word stands for beyond doubt.
+    pub(super) cure: Option<Cure>,
+}
+
+/// What a word stands for.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Cure {
+    /// The unit.
+    pub unit: String,
+    /// The basis that was joined to it: `abs`, `gauge`, `diff`.
+    pub basis: Option<&'static str>,
+    /// Whether the word can mean nothing else.
+    pub certain: bool,
 }
 
 /// Most names that are suggested for a word.
@@ -16,19 +29,19 @@ const MOST_NAMES: usize = 3;
 
 /// Habits of which the cure is another spelling of the same unit: words, and what to write.
 const SPELLINGS: &[(&[&str], &str)] = &[
-    (&["in", "inches", "In"], "inch"),
+    (&["in", "ins", "inches", "In"], "inch"),
     (&["feet", "foot", "Ft"], "ft"),
     (&["yard", "yards"], "yd"),
     (&["mile", "miles"], "mi"),
     (&["meter", "metre", "meters", "metres", "mtr"], "m"),
     (&["micron", "microns"], "um"),
     (&["gram", "grams", "gr", "gm"], "g"),
-    (&["kilogram", "kilograms", "kilo", "kgs", "Kg", "KG", "KGS"], "kg"),
+    (&["kilogram", "kilograms", "kilo", "kgs", "kq", "Kg", "KG", "KGS"], "kg"),
     (&["tonne", "tonnes", "te", "mt", "MT"], "t"),
     (&["lbs", "lbm", "pound", "pounds", "LB"], "lb"),
     (&["ounce", "ounces"], "oz"),
     (&["sec", "secs", "second", "seconds", "Sec"], "s"),
-    (&["mins", "minute", "minutes", "Min"], "min"),
+    (&["mins", "mn", "minute", "minutes", "Min"], "min"),
     (&["hr", "hrs", "hour", "hours", "Hr"], "h"),
     (&["day", "days"], "d"),
     (&["weeks", "wk"], "week"),
@@ -40,6 +53,9 @@ const SPELLINGS: &[(&[&str], &str)] = &[
     (&["cuft", "cft", "cf"], "ft3"),
     (&["sqft", "sf"], "ft2"),
     (&["sqm", "qm"], "m2"),
+    (&["sqmm", "qmm"], "mm2"),
+    (&["sqcm", "qcm"], "cm2"),
+    (&["sqin"], "in2"),
     (&["barrel", "barrels"], "bbl"),
     (&["mole", "moles", "Mol", "gmol", "mols"], "mol"),
     (&["kgmol", "kgmole", "kmole", "Kmol", "KMOL", "kMol"], "kmol"),
@@ -102,6 +118,12 @@ const SPELLINGS: &[(&[&str], &str)] = &[
     (&["sm3", "SM3", "scm", "SCM"], "Sm3"),
 ];
 
+/// Those of the habits that have meant something else as well: the cure is to be looked at.
+const DOUBTFUL: &[&str] = &[
+    "In", "gr", "kilo", "te", "mt", "MT", "lit", "cf", "sf", "gmol", "mb", "psf_", "wc", "WC", "at", "ata", "kp", "ksc", "PS", "CV", "pk",
+    "TR", "RT", "bhp", "grad", "cp", "CP", "cs", "kt", "kn", "kq", "Cal", "mn", "pa", "PA",
+];
+
 /// Words of which the cure needs a sentence.
 const SENTENCES: &[(&[&str], &str)] = &[
     (&["C"], "a temperature in degrees Celsius is written `degC`, a charge in coulombs `A.s`"),
@@ -140,7 +162,12 @@ const SENTENCES: &[(&[&str], &str)] = &[
 /// Endings by which a word says the basis of a pressure.
 const BASES: &[(&str, &str)] = &[
     ("gauge", "gauge"),
+    ("gage", "gauge"),
+    ("gag", "gauge"),
+    ("absolute", "abs"),
     ("abs", "abs"),
+    ("differential", "diff"),
+    ("difference", "diff"),
     ("diff", "diff"),
     ("ga", "gauge"),
     ("g", "gauge"),
@@ -157,7 +184,27 @@ const BASES: &[(&str, &str)] = &[
 pub(super) fn suggest(word: &str) -> Suggestion {
     let stem = word.trim_end_matches(|c: char| c.is_ascii_digit());
     let help = help(word).or_else(|| if stem == word { None } else { help(stem) });
-    Suggestion { near: near(word, stem), help: help.or_else(|| product(word)) }
+    Suggestion { near: near(word, stem), help: help.or_else(|| product(word)), cure: cure(word, stem) }
+}
+
+/// The unit that a word stands for.
+fn cure(word: &str, stem: &str) -> Option<Cure> {
+    let spelling = |word: &str| SPELLINGS.iter().find(|(words, _)| words.contains(&word)).map(|(_, spelling)| *spelling);
+    let certain = !DOUBTFUL.contains(&word) && !DOUBTFUL.contains(&stem);
+    if let Some(unit) = spelling(word) {
+        return Some(Cure { unit: unit.to_owned(), basis: None, certain });
+    }
+    if let Some(unit) = spelling(stem) {
+        let unit = format!("{unit}{}", &word[stem.len()..]);
+        return parse(&unit).is_ok().then_some(Cure { unit, basis: None, certain });
+    }
+    if SENTENCES.iter().any(|(words, _)| words.contains(&word)) {
+        return None;
+    }
+    BASES.iter().find_map(|(ending, _)| {
+        let (unit, basis) = joined_basis(word.strip_suffix(ending)?.trim_end_matches(['_', '-']), ending)?;
+        Some(Cure { unit, basis: Some(basis), certain: true })
+    })
 }
 
 /// Names like the word. Its digits count first where they cannot be a power (`inH20`), else the word without them (`kgg3`).
@@ -190,10 +237,29 @@ fn help(word: &str) -> Option<String> {
 
 /// The help for a unit of pressure, which may itself be misspelt, and the basis that was joined to it: `bar` and `g`.
 pub(super) fn pressure_with_basis(unit: &str, basis: &str) -> Option<String> {
+    joined_basis(unit, basis).map(|(unit, basis)| format!("write `{unit} {basis}`"))
+}
+
+/// A unit of pressure and its basis, of a unit that may be misspelt and a word or letter for the basis: `bar` and `g`, `Bar` and `absolute`.
+///
+/// ```
+/// use gaswright::units::joined_basis;
+/// assert_eq!(joined_basis("bar", "g"), Some(("bar".to_owned(), "gauge")));
+/// assert_eq!(joined_basis("kPa", "absolute"), Some(("kPa".to_owned(), "abs")));
+/// assert_eq!(joined_basis("m", "g"), None);
+/// ```
+#[must_use]
+pub fn joined_basis(unit: &str, basis: &str) -> Option<(String, &'static str)> {
     let (_, basis) = BASES.iter().find(|(ending, _)| *ending == basis)?;
     let spelling = SPELLINGS.iter().find(|(words, _)| words.contains(&unit)).map_or(unit, |(_, spelling)| spelling);
     let known = parse(spelling).ok().filter(|unit| unit.dimension == Dimension::PRESSURE)?;
-    Some(format!("write `{} {basis}`", known.name))
+    Some((known.name, basis))
+}
+
+/// The unit of a pressure times what is meant for its basis: nobody measures in bar times gram.
+pub(super) fn basis_as_factor(unit: &str) -> Option<(String, &'static str)> {
+    let (pressure, letter) = unit.rsplit_once('.')?;
+    if matches!(letter, "g" | "G" | "A" | "a") { joined_basis(pressure, letter) } else { None }
 }
 
 /// The help for two unit words run into one: `Nm`, `Pas`, `kgm3`. Two of one dimension (`kgg`) are a slip of another kind.

@@ -8,6 +8,7 @@
 //! writes digits, [`constants`] holds the physical constants of the whole house, [`math`] is its one door to elementary
 //! functions. This room knows nothing of sheets, gases or pressure bases: that `bar` needs `abs` or `gauge` is said elsewhere.
 
+mod alike;
 pub mod constants;
 mod dimension;
 pub mod figures;
@@ -22,9 +23,11 @@ mod registry;
 mod unit;
 mod unit_error;
 
+pub use alike::alike;
 pub use constants::{Constant, find_constant};
 pub use dimension::{Dimension, LARGEST_DENOMINATOR, LARGEST_EXPONENT};
 pub use figures::{figures_written, half_width, last_place_written, place_for, place_of_width, write_figures, write_to_place};
+pub use misspelling::{Cure, joined_basis};
 pub use quantity::{Quantity, find_quantity, quantities};
 pub use rational::Rational;
 pub use reading::parse;

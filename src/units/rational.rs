@@ -99,6 +99,10 @@ impl Rational {
     /// The sum; `None` where it does not fit.
     #[must_use]
     pub fn checked_add(self, other: Self) -> Option<Self> {
+        // Whole numbers, which nearly all exponents are, are in lowest terms.
+        if self.den == 1 && other.den == 1 {
+            return Some(Self::whole(self.num.checked_add(other.num)?));
+        }
         let (a, b, c, d) = (i64::from(self.num), i64::from(self.den), i64::from(other.num), i64::from(other.den));
         Self::reduced((a * d).checked_add(c * b)?, b * d)
     }
@@ -112,6 +116,9 @@ impl Rational {
     /// The product; `None` where it does not fit.
     #[must_use]
     pub fn checked_mul(self, other: Self) -> Option<Self> {
+        if self.den == 1 && other.den == 1 {
+            return Some(Self::whole(self.num.checked_mul(other.num)?));
+        }
         Self::reduced(i64::from(self.num) * i64::from(other.num), i64::from(self.den) * i64::from(other.den))
     }
 

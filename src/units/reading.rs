@@ -3,7 +3,7 @@
 //! `unit := ["1/"] factor (("." | "/") factor)*`, from left to right, `factor := "(" unit ")" | word [power]`. A whole word is
 //! looked up first (`mmH2O`, `Nm3`); where it is no name, digits at its end are its power.
 
-use super::misspelling::{self, Suggestion};
+use super::misspelling::{self, Cure, Suggestion};
 use super::product::Product;
 use super::{LARGEST_EXPONENT, Unit, UnitError, UnitErrorKind, registry};
 
@@ -40,7 +40,14 @@ pub fn parse(text: &str) -> Result<Unit, UnitError> {
     if let Some(c) = reader.peek() {
         return Err(reader.unexpected(c));
     }
-    Ok(product.into_unit())
+    let unit = product.into_unit();
+    if let Some((pressure, basis)) = misspelling::basis_as_factor(&unit.name) {
+        let help = Some(format!("write `{pressure} {basis}`"));
+        let cure = Some(Box::new(Cure { unit: pressure, basis: Some(basis), certain: true }));
+        let kind = UnitErrorKind::Unknown { word: text.to_owned(), near: Vec::new(), help, cure };
+        return Err(UnitError { offset: 0, len: text.len(), kind });
+    }
+    Ok(unit)
 }
 
 struct Reader<'a> {
@@ -122,6 +129,10 @@ impl Reader<'_> {
         }
         self.at = start + end;
         let written = &rest[..end];
+        let mut pairs = written.chars().zip(written.chars().skip(1));
+        if pairs.any(|(one, next)| one.is_numeric() && next.is_numeric() && one.is_ascii() != next.is_ascii()) {
+            return Err(self.error(start, UnitErrorKind::Syntax("its power is written twice".to_owned())));
+        }
         let word = plain_spelling(written);
         if let Some(entry) = registry().find(&word) {
             let product = self.limited(start, Product::power(entry, word, 1))?;
@@ -152,8 +163,11 @@ impl Reader<'_> {
 
     /// The error of a word that is no unit. Behind it may stand a basis in brackets, as in `bar(g)`.
     fn unknown(&self, start: usize, word: &str) -> UnitError {
-        let Suggestion { near, help } = misspelling::suggest(word);
-        self.error(start, UnitErrorKind::Unknown { word: self.text[start..self.at].to_owned(), near, help })
+        let Suggestion { near, help, cure } = misspelling::suggest(word);
+        // A basis stands behind the whole unit: within a compound it cures nothing.
+        let whole = start == 0 && self.at == self.text.len();
+        let cure = cure.filter(|cure| cure.basis.is_none() || whole).map(Box::new);
+        self.error(start, UnitErrorKind::Unknown { word: self.text[start..self.at].to_owned(), near, help, cure })
     }
 
     /// The error of a character that cannot stand where it stands.
@@ -161,7 +175,7 @@ impl Reader<'_> {
         if c == '('
             && let Some(help) = self.basis_in_brackets()
         {
-            let kind = UnitErrorKind::Unknown { word: self.text.to_owned(), near: Vec::new(), help: Some(help) };
+            let kind = UnitErrorKind::Unknown { word: self.text.to_owned(), near: Vec::new(), help: Some(help), cure: None };
             return UnitError { offset: 0, len: self.text.len(), kind };
         }
         let message = match c {

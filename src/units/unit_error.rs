@@ -1,5 +1,7 @@
 //! Unit texts that cannot be read: where, and why.
 
+use super::Cure;
+
 /// A unit text that cannot be read.
 #[derive(Clone, Debug, PartialEq)]
 pub struct UnitError {
@@ -23,6 +25,8 @@ pub enum UnitErrorKind {
         near: Vec<&'static str>,
         /// What to write instead, where the word is a known habit: a short sentence.
         help: Option<String>,
+        /// The unit that the word stands for, where it is a known habit.
+        cure: Option<Box<Cure>>,
     },
     /// A power, alone or together with others, beyond the limit of powers or the range of numbers.
     Power {

@@ -74,10 +74,10 @@ const OPERATORS: &[Operator] = &[
 
 /// The shares that must not fall, in percent: caught, on the right line, with the right cure. The goals are 98, 95 and 90; a share
 /// reached is written here as its floor, so that what was once found stays found.
-const FLOOR: [f64; 3] = [99.6, 99.5, 98.3];
+const FLOOR: [f64; 3] = [99.6, 99.5, 99.3];
 
 /// One mistake, one finding: the mean number of errors of a mutant must not pass this.
-const MOST_ERRORS: f64 = 1.05;
+const MOST_ERRORS: f64 = 1.0;
 
 #[derive(Default)]
 struct Count {

@@ -40,3 +40,10 @@ pub(crate) fn result(span: Span, name: &str, value: &str) -> Diagnostic {
         .label("a temperature below 0 K")
         .help("check the signs and the differences in the lines that lead to it")
 }
+
+/// A result in kelvin that may be a temperature or a difference, and is negative.
+pub(crate) fn perhaps(span: Span, name: &str, value: &str) -> Diagnostic {
+    Diagnostic::warning(CODE, span, format!("`{name}` comes out at {value}: as a temperature it lies below absolute zero"))
+        .label("a temperature or a difference?")
+        .help("mark a difference with `diff` behind its unit (`K diff`); of a temperature check the signs in the lines that lead to it")
+}

@@ -61,6 +61,29 @@ pub(crate) fn expected(span: Span, what: &str, dimension: &str, wanted: &str, wa
     finding.label(a(dimension)).help("check the relation and the unit")
 }
 
+/// A quantity whose unit is of another dimension than all that uses it asks for. `unit` is its unit as written.
+pub(crate) fn by_its_uses(span: Span, name: &str, unit: Option<&str>, dimension: &str, wanted: &str) -> Diagnostic {
+    let by = unit.map_or("without a unit".to_owned(), |unit| format!("by its unit `{unit}`"));
+    Diagnostic::error(CODE, span, format!("`{name}` is {} {by}, but its uses ask for {}", a(dimension), a(wanted))).label(a(dimension))
+}
+
+/// The units that a quantity could have.
+pub(crate) fn units_of(dimension: &str, units: &[&str]) -> String {
+    if units.is_empty() {
+        return format!("give it a unit of {dimension}, or check the relations that use it");
+    }
+    let all: Vec<String> = units.iter().map(|unit| format!("`{unit}`")).collect();
+    format!("give it a unit of {dimension} ({}), or check the relations that use it", all.join(", "))
+}
+
+/// Reference conditions with the pressure first; `turned` are both in their order.
+pub(crate) fn reference_order(span: Span, turned: &str) -> Diagnostic {
+    Diagnostic::error(CODE, span, "reference conditions begin with the temperature; here the pressure stands first")
+        .label("the other way about")
+        .help(format!("write `{turned}`"))
+        .safe_edit(span, turned)
+}
+
 /// A function that takes a pure number and is given a quantity.
 pub(crate) fn argument(span: Span, function: &str, dimension: &str) -> Diagnostic {
     Diagnostic::error(CODE, span, format!("`{function}` takes a pure number, this is {}", a(dimension)))

@@ -39,6 +39,18 @@ pub(crate) fn basis(span: Span) -> Diagnostic {
         .help("add `by mole`, `by mass` or `by volume` (a data sheet of a gas usually means by volume, a weighed filling by mass)")
 }
 
+/// Parts of a mixture that have no share: all of them, or some.
+pub(crate) fn missing(span: Span, names: &[String], all: bool) -> Diagnostic {
+    let message = match names {
+        _ if all => "this mixture gives no shares".to_owned(),
+        [one] => format!("the share of {one} is missing in this mixture"),
+        several => format!("the shares of {} are missing in this mixture", several.join(", ")),
+    };
+    Diagnostic::error(CODE, span, message)
+        .label("no share")
+        .help("write a number before each gas: `0.82 argon + 0.18 carbon dioxide by mole`")
+}
+
 /// A share that cannot be one, for the reason `why`.
 pub(crate) fn share(span: Span, why: &str) -> Diagnostic {
     Diagnostic::error(CODE, span, format!("this share cannot stand: {why}"))

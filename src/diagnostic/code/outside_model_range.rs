@@ -82,10 +82,13 @@ pub(crate) fn correlation(span: Span, state: &str, word: &str, value: &str, publ
 }
 
 /// A gas for which the tool has no heat capacity at all.
-pub(crate) fn no_data(span: Span, gas: &str) -> Diagnostic {
-    Diagnostic::error(CODE, span, format!("no heat capacity of `{gas}` is known here"))
-        .label("needs the heat capacity")
-        .help("keep to properties that do not need it (p, T, v, rho), or give it as an input")
+pub(crate) fn no_data(span: Span, gas: &str, by_equation: bool) -> Diagnostic {
+    let finding = Diagnostic::error(CODE, span, format!("no heat capacity of `{gas}` as an ideal gas is known here")).label("needs the heat capacity");
+    if by_equation {
+        finding.help("write `, real` behind the gas: its reference equation has them")
+    } else {
+        finding.help("keep to properties that do not need it (p, T, v, rho), or give it as an input")
+    }
 }
 
 /// The site outside the standard atmosphere.

@@ -28,6 +28,28 @@ answer p in kPa abs
 ```
 "##;
 
+/// A basis in another spelling behind a unit of pressure: `bar g`, `bar(g)`, `bar absolute`. `whole` is the unit with it.
+pub(crate) fn otherwise_spelled(span: Span, written: &str, whole: Span, unit: &str, basis: &str) -> Diagnostic {
+    Diagnostic::error(CODE, span, format!("`{written}` is not how a pressure says its basis"))
+        .label("the basis of this pressure")
+        .help(format!("write `{unit} {basis}`"))
+        .safe_edit(whole, format!("{unit} {basis}"))
+}
+
+/// A negative pressure `text` without a basis: it is no absolute one. `span` is the value up to its unit.
+pub(crate) fn negative(span: Span, text: &str) -> Diagnostic {
+    Diagnostic::error(CODE, span, format!("the pressure `{text}` does not say gauge or diff"))
+        .label("a gauge reading or a difference?")
+        .fact("no absolute pressure is negative")
+        .help(format!("write `{text} gauge` (below the atmosphere of the site) or `{text} diff` (a difference)"))
+        .edit(Span { start: span.end, end: span.end }, " gauge")
+}
+
+/// Adds that the value would be a vacuum as an absolute pressure.
+pub(crate) fn vacuum(finding: Diagnostic) -> Diagnostic {
+    finding.fact("as `abs` it lies below the atmosphere of the site: a vacuum")
+}
+
 /// A pressure `text` without a basis, or a unit of pressure in which a value is to be shown; `meanings` says what each basis would
 /// make of it.
 pub(crate) fn finding(span: Span, text: &str, meanings: Option<[String; 2]>) -> Diagnostic {

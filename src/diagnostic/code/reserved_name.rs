@@ -29,6 +29,11 @@ pub(crate) fn declared(span: Span, word: &str) -> Diagnostic {
         .help(format!("choose another name, such as `{word}_1`"))
 }
 
+/// Whether a finding is that of a declaration.
+pub(crate) fn declares(finding: &Diagnostic) -> bool {
+    finding.code == CODE && finding.message.ends_with("cannot be a name")
+}
+
 /// `word` stands where a name is used.
 pub(crate) fn used(span: Span, word: &str) -> Diagnostic {
     Diagnostic::error(CODE, span, format!("`{word}` is a reserved word of the language and names no quantity"))

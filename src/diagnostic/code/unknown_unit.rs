@@ -38,6 +38,20 @@ pub(crate) fn finding(span: Span, word: &str, near: &[&str], why: Option<&str>) 
     }
 }
 
+/// The edit that writes what a habit stands for; a basis that stands behind already is not written again.
+pub(crate) fn cured(finding: Diagnostic, span: Span, unit: &str, basis: Option<&str>, certain: bool) -> Diagnostic {
+    let written = basis.map_or(unit.to_owned(), |basis| format!("{unit} {basis}"));
+    if certain { finding.safe_edit(span, written) } else { finding.edit(span, written) }
+}
+
+/// A sign of division or multiplication within a unit that stands twice; `whole` is the unit with both.
+pub(crate) fn doubled_sign(span: Span, sign: &str) -> Diagnostic {
+    Diagnostic::error(CODE, span, format!("`{sign}{sign}` stands in this unit: one sign is too many"))
+        .label("one too many")
+        .help(format!("write `{sign}` once"))
+        .safe_edit(span, sign)
+}
+
 /// A word behind a number that is a name of the sheet: the multiplication sign is missing.
 pub(crate) fn missing_multiplication(span: Span, word: &str, number: &str) -> Diagnostic {
     Diagnostic::error(CODE, span, format!("`{word}` stands behind a number like a unit, but is a quantity of this sheet"))

@@ -36,3 +36,11 @@ pub(crate) fn choice(span: Span, word: &str, words: &[&str]) -> Diagnostic {
     let all = words.iter().map(|word| format!("`{word}`")).collect::<Vec<_>>().join(" or ");
     Diagnostic::error(CODE, span, format!("`{word}` has no meaning here")).label(format!("expected {all}")).help(format!("write {all}"))
 }
+
+/// `word` stands between two of a list, where a comma belongs; `gap` is what the comma replaces. `listed` says of what.
+pub(crate) fn comma(span: Span, word: &str, listed: &str, gap: Span) -> Diagnostic {
+    Diagnostic::error(CODE, span, format!("{listed} are separated by a comma, not by `{word}`"))
+        .label("a comma belongs here")
+        .help(format!("write `,` for `{word}`"))
+        .safe_edit(gap, ",")
+}

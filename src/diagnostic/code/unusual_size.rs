@@ -27,6 +27,14 @@ answer p
 ```
 "##;
 
+/// An absolute pressure below the atmosphere of the site that nothing calls a vacuum; `as_gauge` is what the reading of a gauge would be.
+pub(crate) fn vacuum(span: Span, name: &str, value: &str, site: &str, as_gauge: &str) -> Diagnostic {
+    Diagnostic::warning(CODE, span, format!("`{name}` = {value} is a vacuum: the atmosphere of the site is {site}"))
+        .label("less than the atmosphere")
+        .fact(format!("read off a gauge it would be {as_gauge}"))
+        .help("write `gauge` where a gauge shows it; where it is a vacuum, say so in its description")
+}
+
 /// `value` of `name` lies outside the usual range of its kind.
 pub(crate) fn finding(span: Span, name: &str, value: &str, kind: &str, range: &str) -> Diagnostic {
     Diagnostic::warning(CODE, span, format!("`{name}` = {value} is an unusual {kind}"))

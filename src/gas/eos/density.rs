@@ -19,8 +19,8 @@ const MOST_STEPS: u32 = 120;
 /// Highest reduced density that is tried: no gas of the table is denser at its highest pressure.
 const DENSEST: f64 = 12.0;
 
-/// Below this share of the saturation pressure by the auxiliary equation, whose error is below a third of the rest, a gas is not near its
-/// saturation line, and the line is not solved for.
+/// Below this share of the saturation pressure by the auxiliary equation a gas is surely below its saturation line, and the line is not
+/// solved for: checked for every gas where those equations stand.
 const SURELY_GAS: f64 = 0.95;
 
 impl Equation {

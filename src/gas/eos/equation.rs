@@ -35,7 +35,7 @@ const COLUMNS: [&str; 16] = [
     "uncertainty",
 ];
 
-/// Air as one substance: an equation of fixed composition, for the transport properties of dry air and for comparison.
+/// Air as one substance: an equation of fixed composition, the model of dry air and of its transport properties.
 pub(crate) const AIR: &str = "dry air";
 
 /// Source of [`AIR`].

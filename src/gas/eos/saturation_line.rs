@@ -23,8 +23,8 @@ const AT_CRITICAL: f64 = 1e-7;
 /// Auxiliary equations of a gas for p_sat and both densities, as a start and a quick bound, never as a result.
 ///
 /// Equation: value = reducing value · exp((T_r/T) Σ n θ^t) or · (1 + Σ n θ^t), θ = 1 - T/T_r.
-/// Error:    up to 0.98 T_c below 3 % in pressure and 4 % in the density of the gas (helium at 4.8 K: 3.1 %, every other gas below 3 %); what is
-///           concluded from them is checked for every gas in the tests.
+/// Error:    no bound is taken for granted: some are off by several percent (the pressure of n-octane by 10 % at 216 K, the density of helium by 5.7 % at
+///           0.98 T_c). What is concluded from them is checked for every gas in the tests.
 #[derive(Clone, Debug, Deserialize)]
 pub(crate) struct SaturationStart {
     #[serde(rename = "pS")]
@@ -384,6 +384,7 @@ mod tests {
     /// surely that of a gas is.
     #[test]
     fn what_the_auxiliary_equations_decide_is_right() {
+        let mut wrong = Vec::new();
         for name in Equation::names().into_iter().filter(|name| *name != super::super::equation::AIR) {
             let equation = Equation::of_name(name).unwrap();
             let c = &equation.constants;
@@ -391,12 +392,13 @@ mod tests {
                 let t_k = c.t_min_k + (0.98 * c.t_c_own_k - c.t_min_k) * f64::from(i) / 100.0;
                 let line = equation.saturation_at(t_k).unwrap();
                 let (p, rho) = (equation.start.p_sat(t_k), equation.start.rho_vapour(t_k));
-                assert!((p / line.p_pa - 1.0).abs() < 0.03 && (rho / line.rho_vapour - 1.0).abs() < 0.04, "{name} {t_k} K: {p} {rho}");
-                assert!(0.95 * p < line.p_pa && 0.9 * rho < line.rho_vapour, "{name} {t_k} K");
                 let isotherm = equation.isotherm(t_k);
                 let (at_end, slope) = isotherm.pressure(1.05 * rho);
-                assert!(at_end > 0.95 * p && slope > 0.0, "{name} {t_k} K: {at_end} {slope}");
+                if !(0.95 * p < line.p_pa && 0.9 * rho < line.rho_vapour && at_end > 0.95 * p && slope > 0.0) {
+                    wrong.push(format!("{name} {t_k} K: {} {} {} {slope}", p / line.p_pa, rho / line.rho_vapour, at_end / p));
+                }
             }
         }
+        assert!(wrong.is_empty(), "{}", wrong.join("\n"));
     }
 }

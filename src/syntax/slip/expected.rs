@@ -2,6 +2,9 @@
 
 use crate::syntax::grammar::Rule;
 
+/// What a number is called.
+const NUMBER: &str = "a number";
+
 /// Phrases shown at most.
 const MOST: usize = 6;
 
@@ -66,13 +69,15 @@ pub(super) fn phrase(rules: &[Rule]) -> String {
             Rule::equals => "`=`".to_owned(),
             Rule::comma => "`,`".to_owned(),
             Rule::plus => "`+`".to_owned(),
+            // A bracket opens an operand, and where one may stand so may a number, which is only tried before a digit.
+            Rule::group | Rule::cond_group if !phrases.iter().any(|phrase| phrase == NUMBER) => format!("{NUMBER}, `(`"),
             Rule::open | Rule::group | Rule::cond_group => "`(`".to_owned(),
             Rule::close => "`)`".to_owned(),
             Rule::dots => "`..`".to_owned(),
             Rule::sign => continue,
             Rule::operator => "an operator".to_owned(),
             Rule::comparator => "`<`, `<=`, `>` or `>=`".to_owned(),
-            Rule::number | Rule::quantity | Rule::literal => "a number".to_owned(),
+            Rule::number | Rule::quantity | Rule::literal => NUMBER.to_owned(),
             Rule::unit => "a unit".to_owned(),
             Rule::path | Rule::name => "a name".to_owned(),
             Rule::arguments => continue,

@@ -11,7 +11,7 @@ use crate::diagnostic::{Diagnostic, Span, nearest};
 use crate::syntax::grammar::Rule;
 use crate::syntax::limits::{DEEPEST_BRACKETS, LONGEST_LINE};
 use crate::syntax::line::{Fault, Line};
-use crate::syntax::word::{EXPRESSION_WORDS_NOT_OFFERED, is_reserved, starts_statement};
+use crate::syntax::word::{CONSTANTS, EXPRESSION_WORDS_NOT_OFFERED, is_reserved, starts_statement};
 
 /// Where a rule stopped reading a line.
 pub(crate) struct Stop<'a> {
@@ -57,6 +57,7 @@ pub(crate) fn explain(file: &str, line: Span, stop: &Stop<'_>) -> Diagnostic {
         .or_else(|| look.uncertainty())
         .or_else(|| look.comparison())
         .or_else(|| look.equals())
+        .or_else(|| look.other_word())
         .or_else(|| look.misspelt_word())
         .or_else(|| look.missing_word())
         .or_else(|| look.given_expression())
@@ -232,15 +233,35 @@ impl<'a> Look<'a> {
         choice.then(|| unknown_word::choice(here.span, here.text, &words))
     }
 
-    /// A comma, `in` or `..` that is left out or said otherwise.
-    fn missing_word(&self) -> Option<Diagnostic> {
+    /// `in`, `..` or a comma that is said otherwise: `2 m as mm`, `p = 1 bar abs and T = 300 K`.
+    fn other_word(&self) -> Option<Diagnostic> {
         let here = self.here()?;
         if self.tried(Rule::dots) && (here.is_word("to") || here.is_mark(&["…", "-", "–"])) {
             return Some(unknown_word::near(here.span, here.text, ".."));
         }
-        if (self.tried(Rule::in_unit) || self.tried(Rule::in_word)) && (here.is_word("as") || here.is_word("to")) {
+        let shows = matches!(self.stop.rule, Rule::let_line | Rule::answer_line | Rule::unknown_line);
+        if (shows || self.tried(Rule::in_unit) || self.tried(Rule::in_word)) && (here.is_word("as") || here.is_word("to")) && self.index > 1
+        {
             return Some(unknown_word::near(here.span, here.text, "in"));
         }
+        let listed = match self.stop.rule {
+            Rule::state_line => "the properties of a state",
+            Rule::answer_line => "answers",
+            Rule::correlate_line => "the two inputs",
+            Rule::reference_line => "temperature and pressure",
+            _ => return None,
+        };
+        let before = self.before().filter(|_| self.index > 1 && (here.is_word("and") || here.is_mark(&["&", "+"])))?;
+        let follows = self.tokens.get(self.index + 1)?;
+        let listed_next = follows.kind != TokenKind::Text
+            && (self.stop.rule != Rule::state_line || self.tokens[..self.index].iter().any(|token| token.is_word("at")));
+        let gap = Span { start: before.span.end, end: here.span.end };
+        listed_next.then(|| unknown_word::comma(here.span, here.text, listed, gap))
+    }
+
+    /// A comma or a word that is left out.
+    fn missing_word(&self) -> Option<Diagnostic> {
+        let here = self.here()?;
         if here.kind != TokenKind::Word || is_reserved(here.text) {
             return None;
         }
@@ -290,11 +311,22 @@ impl<'a> Look<'a> {
     fn missing_operator(&self) -> Option<Diagnostic> {
         let (before, here) = (self.before()?, self.here()?);
         let ends = matches!(before.kind, TokenKind::Word | TokenKind::Number) || before.is_mark(&[")"]);
-        let begins = here.kind == TokenKind::Number || here.is_mark(&["("]) || here.kind == TokenKind::Word && !is_reserved(here.text);
-        if self.tried(Rule::operator) && crate::syntax::tree::Function::of_word(before.text).is_some() {
+        let is_function = |token: &Token<'_>| crate::syntax::tree::Function::of_word(token.text).is_some();
+        let is_called = is_function(here) && self.tokens.get(self.index + 1).is_some_and(|next| next.is_mark(&["("]));
+        let begins = here.kind == TokenKind::Number
+            || here.is_mark(&["("])
+            || is_called
+            || here.kind == TokenKind::Word && (!is_reserved(here.text) || CONSTANTS.contains(&here.text));
+        // Behind a unit `abs` is a basis.
+        let basis = before.text == "abs" && self.index > 1 && self.tokens[self.index - 2].kind == TokenKind::Word;
+        let takes_operator = self.tried(Rule::operator)
+            || (is_called || CONSTANTS.contains(&here.text))
+                && matches!(self.stop.rule, Rule::let_line | Rule::relation_line)
+                && self.index > 2;
+        if self.tried(Rule::operator) && is_function(before) && !basis {
             return Some(reserved_name::function_without_brackets(before.span, before.text));
         }
-        (self.tried(Rule::operator) && ends && begins).then(|| missing_operator::between(before.span, before.text, here.span, here.text))
+        (takes_operator && ends && begins && !basis).then(|| missing_operator::between(before.span, before.text, here.span, here.text))
     }
 
     /// A word of the language where a name should stand.

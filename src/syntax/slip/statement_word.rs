@@ -3,13 +3,13 @@
 use pest::Parser;
 
 use super::token::{TokenKind, tokens};
-use crate::diagnostic::code::{bad_line, indented_line, unindented_line, unknown_statement};
+use crate::diagnostic::code::{bad_line, indented_line, missing_operator, unindented_line, unknown_statement};
 use crate::diagnostic::{Diagnostic, Span, nearest};
 use crate::syntax::character::{is_blank, is_letter};
 use crate::syntax::grammar::{Grammar, plain, rule_of_word};
 use crate::syntax::limits::MOST_ERRORS;
 use crate::syntax::line::{Line, first_word};
-use crate::syntax::tree::{Named, Tree};
+use crate::syntax::tree::{Function, Named, Tree};
 use crate::syntax::word::{STATEMENT_WORDS, STATEMENT_WORDS_NOT_OFFERED, is_reserved, starts_statement};
 
 /// Words that go on with a statement. At column 1 they have lost their indentation.
@@ -46,6 +46,9 @@ pub(crate) fn misspelt(text: &str, line: &Line) -> Diagnostic {
     let behind = Span { start: line.word.end, end: line.span.end };
     let next = next_character(text, behind).unwrap_or(line.span.end as usize);
     let word_behind = first_word(&text[next..line.span.end as usize]);
+    if Function::of_word(word_behind).is_some() && text[next + word_behind.len()..line.span.end as usize].trim_start().starts_with('(') {
+        return missing_operator::between(line.word, word, Span::new(next, next + word_behind.len()), word_behind);
+    }
     let near = nearest(word, STATEMENT_WORDS.iter().chain(STATEMENT_WORDS_NOT_OFFERED).copied());
     let Some(near) = near.first() else {
         // `height in m` and the like: what is missing is a word in front.

@@ -1,15 +1,82 @@
 //! Slips in units: blanks inside, a power with `^`, the inch.
 
 use super::token::{Token, TokenKind};
-use crate::diagnostic::code::{inch_word, unit_power, unit_with_blanks};
+use crate::diagnostic::code::{inch_word, pressure_without_basis, unit_power, unit_with_blanks, unknown_unit};
 use crate::diagnostic::{Diagnostic, Span};
+use crate::units::joined_basis;
 
 /// Longest unit word that is taken for one where a name could also stand.
 const LONGEST_UNIT_WORD: usize = 6;
 
 /// Looks at the tokens around the place where reading stopped.
 pub(super) fn look(tokens: &[Token<'_>], stop: usize) -> Option<Diagnostic> {
-    inch(tokens, stop).or_else(|| blanks(tokens, stop)).or_else(|| power(tokens, stop))
+    basis(tokens, stop)
+        .or_else(|| degrees(tokens, stop))
+        .or_else(|| doubled(tokens, stop))
+        .or_else(|| inch(tokens, stop))
+        .or_else(|| blanks(tokens, stop))
+        .or_else(|| power(tokens, stop))
+}
+
+/// `9.6 bar g`, `9.6 bar(g)`, `9.6 bar-g`, `9.6 bar absolute`.
+fn basis(tokens: &[Token<'_>], stop: usize) -> Option<Diagnostic> {
+    let here = tokens.get(stop)?;
+    let unit = stop.checked_sub(1).map(|before| &tokens[before]).filter(|token| token.kind == TokenKind::Word)?;
+    let start = start_of_unit(tokens, stop)?;
+    let (word, last) = if here.kind == TokenKind::Word {
+        (here, here)
+    } else if here.is_mark(&["(", "["]) {
+        (tokens.get(stop + 1)?, tokens.get(stop + 2).filter(|token| token.is_mark(&[")", "]"]))?)
+    } else {
+        let touches = here.is_mark(&["-", "−", "–"]) && unit.touches(here);
+        let word = tokens.get(stop + 1).filter(|word| touches && here.touches(word))?;
+        (word, word)
+    };
+    if start + 1 != stop {
+        return None;
+    }
+    let (unit_text, basis) = joined_basis(unit.text, word.text.trim_end_matches('.'))?;
+    let span = if here.kind == TokenKind::Word { here.span } else { here.span.to(last.span) };
+    let between = if here.kind == TokenKind::Word || !unit.touches(here) { " " } else { "" };
+    let rest = match here.text {
+        "(" => format!("({})", word.text),
+        "[" => format!("[{}]", word.text),
+        _ if here.kind == TokenKind::Word => word.text.to_owned(),
+        sign => format!("{sign}{}", word.text),
+    };
+    Some(pressure_without_basis::otherwise_spelled(
+        span,
+        &format!("{}{between}{rest}", unit.text),
+        unit.span.to(last.span),
+        &unit_text,
+        basis,
+    ))
+}
+
+/// `20 deg C`, `20 ° C`: one word.
+fn degrees(tokens: &[Token<'_>], stop: usize) -> Option<Diagnostic> {
+    let is_degree = |token: &Token<'_>| matches!(token.text, "deg" | "degs" | "degree" | "degrees" | "°" | "º");
+    let first = [Some(stop), stop.checked_sub(1)].into_iter().flatten().find(|at| tokens.get(*at).is_some_and(is_degree))?;
+    first.checked_sub(1).filter(|before| tokens[*before].kind == TokenKind::Number || tokens[*before].is_word("in"))?;
+    let scale = tokens.get(first + 1)?;
+    let joined = match scale.text {
+        "C" | "c" | "Celsius" | "celsius" => "degC",
+        "F" | "f" | "Fahrenheit" | "fahrenheit" => "degF",
+        "R" | "Rankine" => "degR",
+        "K" | "Kelvin" | "kelvin" => "K",
+        _ => return None,
+    };
+    let whole = tokens[first].span.to(scale.span);
+    Some(unit_with_blanks::finding(scale.span, whole, joined))
+}
+
+/// `kg//m`: a sign that stands twice.
+fn doubled(tokens: &[Token<'_>], stop: usize) -> Option<Diagnostic> {
+    const SIGNS: &[&str] = &["/", ".", "·"];
+    let sign = tokens.get(stop).filter(|token| token.is_mark(SIGNS))?;
+    let second = tokens.get(stop + 1).filter(|second| second.text == sign.text && sign.touches(second))?;
+    start_of_unit(tokens, stop)?;
+    Some(unknown_unit::doubled_sign(sign.span.to(second.span), sign.text))
 }
 
 /// `6 in`: the word is taken.

@@ -1,5 +1,6 @@
 //! What is a gas and what is not, pure and mixed.
 
+use gaswright::gas::eos::Equation;
 use gaswright::gas::model_weakness::weaknesses;
 use gaswright::gas::phase::{BorderModel, PhaseGuard};
 use gaswright::gas::real_gas::ModelKind;
@@ -85,8 +86,12 @@ fn hydrocarbons_are_judged_by_the_cubic_equation() {
 /// The library hands out the liquid of air at 130 K and 3.5 MPa and of a rich gas at 250 K and 5 MPa, and accepts what is beyond its range.
 #[test]
 fn what_the_library_lets_through_is_refused() {
-    let air = RealGas::new(&pure("dry air")).unwrap();
+    let air = RealGas::new(&mixture(&[("nitrogen", 0.7812), ("oxygen", 0.2096), ("argon", 0.0092)])).unwrap();
     assert_eq!(air.kind(), ModelKind::Gerg2008);
+    let as_one_substance = RealGas::new(&pure("dry air")).unwrap();
+    assert_eq!(as_one_substance.kind(), ModelKind::ReferenceEquation);
+    assert!(as_one_substance.density_kg_m3(130.0, 3.5e6).is_err());
+    assert!(as_one_substance.density_kg_m3(800.0, 1e5).is_ok());
     assert!(air.density_kg_m3(130.0, 3.5e6).is_err());
     let rich = RealGas::new(&mixture(&[("methane", 0.7), ("ethane", 0.1), ("propane", 0.1), ("n-butane", 0.1)])).unwrap();
     assert!(matches!(rich.density_kg_m3(250.0, 5e6), Err(StateError::Condenses { .. })));
@@ -114,4 +119,20 @@ fn weak_models_are_told() {
     assert!(of(&[("nitrogen", 0.9), ("ammonia", 0.1)])[0].text.contains("Peng-Robinson"));
     assert_eq!(of(&[("nitrogen", 0.9), ("water", 0.1)])[0].component, "water");
     assert!(weaknesses(&pure("helium"), &RealGas::new(&pure("helium")).unwrap()).is_empty());
+}
+
+/// Every gas that has an equation, along its whole saturation line, a thousandth on either side.
+#[test]
+fn the_line_divides_for_every_gas() {
+    for name in Equation::names().into_iter().filter(|name| *name != "dry air") {
+        let equation = Equation::of_name(name).unwrap();
+        let (c, gas) = (equation.constants(), RealGas::new(&pure(name)).unwrap());
+        for i in 0..40 {
+            let t = c.t_min_k + (0.995 * c.t_c_own_k - c.t_min_k) * f64::from(i) / 39.0;
+            let p = equation.saturation(t).unwrap().p_pa;
+            let above = gas.density_kg_m3(t, 1.001 * p);
+            assert!(matches!(above, Err(StateError::Liquid { .. })), "{name} {t} K: {above:?}");
+            assert!(gas.density_kg_m3(t, 0.999 * p).is_ok(), "{name} {t} K");
+        }
+    }
 }
