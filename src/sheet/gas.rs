@@ -50,7 +50,11 @@ impl Reader<'_> {
                     } else if unknown.ambiguous {
                         code::unknown_gas::ambiguous(part.species.span, &part.species.text, &unknown.near.join(", "))
                     } else {
-                        code::unknown_gas::finding(part.species.span, &part.species.text, &unknown.near)
+                        let mut near = unknown.near;
+                        if let ([_], true) = (parts, crate::diagnostic::nearest(&part.species.text, [HUMID_AIR]).contains(&HUMID_AIR)) {
+                            near.insert(0, HUMID_AIR);
+                        }
+                        code::unknown_gas::finding(part.species.span, &part.species.text, &near)
                     };
                     self.report(finding);
                 }
