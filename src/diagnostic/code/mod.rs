@@ -37,6 +37,7 @@ codes! {
     below_vacuum,
     bounds_out_of_place,
     chained_comparison,
+    condensate,
     constant_by_hand,
     correlation_out_of_place,
     decided_by_missing_figures,
