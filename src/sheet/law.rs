@@ -75,14 +75,22 @@ impl Reader<'_> {
                 Property::Mu => transport.is_some_and(|transport| transport.viscosity_range().is_some()),
                 Property::Lambda => transport.is_some_and(|transport| transport.conductivity_range().is_some()),
                 moisture if moisture.is_moisture() => {
-                    return (!is_humid)
-                        .then(|| code::no_gas_data::moisture(owner.span, &owner.name, property.row().field, &entry.gas.title()));
+                    let place = self.first_use(state, *moisture).unwrap_or(owner.span);
+                    return (!is_humid).then(|| code::no_gas_data::moisture(place, &owner.name, property.row().field, &entry.gas.title()));
                 }
                 _ => true,
             };
             let title = if is_humid { "humid air".to_owned() } else { entry.gas.title() };
             (!is_known).then(|| code::no_gas_data::transport(owner.span, &owner.name, property.row().word, &title))
         })
+    }
+
+    /// Where the sheet first asks for a property of a state.
+    fn first_use(&self, state: StateId, property: Property) -> Option<Span> {
+        let id = *self.properties.get(&(state, property))?;
+        let exprs = (0..self.sheet.exprs.len() as u32).map(ExprId);
+        let places = exprs.filter(|expr| self.sheet.exprs.get(*expr) == Expr::Quantity(id)).filter_map(|expr| self.sheet.span_of(expr));
+        places.min_by_key(|span| span.start)
     }
 
     /// The relation that ties `property` to temperature and pressure.
