@@ -73,7 +73,7 @@ fn humid(state: &State, air: &HumidAir, values: &[f64], (t_k, p_pa): (f64, f64),
     let Some(excess) = condensate(state, air, values) else { return };
     let ratio = humidity_ratio(state, values).unwrap_or(f64::NAN);
     let t_dew = air.mole_fraction(t_k, p_pa, Moisture::HumidityRatio(ratio)).and_then(|x| air.dew_point(p_pa, x)).ok().map(temperature);
-    findings.push(code::condensate::finding(state.span, &state.name, &units::write_figures(1000.0 * excess, 3), t_dew.as_deref()));
+    findings.push(code::water_condenses::finding(state.span, &state.name, &units::write_figures(1000.0 * excess, 3), t_dew.as_deref()));
 }
 
 fn humidity_ratio(state: &State, values: &[f64]) -> Option<f64> {

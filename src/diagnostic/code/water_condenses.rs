@@ -3,7 +3,7 @@
 use crate::diagnostic::{Diagnostic, Span};
 
 /// The code.
-pub(crate) const CODE: &str = "condensate";
+pub(crate) const CODE: &str = "water-condenses";
 
 /// The page.
 pub(crate) const PAGE: &str = r##"
