@@ -1,7 +1,7 @@
 //! What a report is made of.
 
 use crate::diagnostic::{Diagnostic, LineIndex};
-use crate::sheet::{Quantity, QuantityId, Sheet};
+use crate::sheet::{Quantity, QuantityId, Sheet, StateId};
 use crate::solve::Solution;
 use crate::syntax::{self, Tree};
 
@@ -30,6 +30,12 @@ impl<'a> Input<'a> {
     /// The value of a quantity in SI; `None` where the sheet has no solution or does not need it.
     pub(super) fn si(&self, id: QuantityId) -> Option<f64> {
         self.solution.and_then(|solution| solution.values.get(id.0 as usize)).copied().filter(|value| value.is_finite())
+    }
+
+    /// What condenses at a state of humid air, kg per kg of dry air.
+    pub(super) fn condensate(&self, id: StateId) -> Option<f64> {
+        let found = self.solution?.condensates.iter().find(|(state, _)| *state == id);
+        found.map(|(_, condensate)| *condensate)
     }
 
     /// The pressure of the site in Pa; 0 without one.

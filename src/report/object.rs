@@ -182,6 +182,8 @@ pub struct StateObject {
     pub model_source: Option<String>,
     /// Whether the state lies beyond the published range of its model; `null` where the sheet has no solution.
     pub extrapolated: Option<bool>,
+    /// Water that condenses at a state of humid air, kg per kg of dry air; `null` where none does.
+    pub condensate: Option<f64>,
     /// Error of the ideal law in density in percent, where a reference equation tells it.
     pub ideal_error_percent: Option<f64>,
     /// The errors of the ideal law in all that the state may use, where a reference equation tells them.

@@ -147,6 +147,7 @@ impl Maker<'_> {
                         let source = sources[state.gas.0 as usize].get_or_insert_with(|| source_of_judge(state.gas));
                         self.ideal_errors(&errors, source)
                     }),
+                    condensate: self.input.condensate(StateId(at as u32)),
                     ideal_error_percent: verdict.and_then(|verdict| verdict.ideal_error_percent),
                     verdict: verdict.map(|verdict| verdict.verdict.word()),
                     rules: verdict.map(|verdict| RulesObject { a: verdict.rule_a, b: verdict.rule_b }),

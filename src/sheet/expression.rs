@@ -195,7 +195,15 @@ impl Reader<'_> {
                 if self.poisoned_states[state.0 as usize] {
                     return None;
                 }
-                let property = self.property_of(base, tree.names.text(field.name), field.span)?;
+                let word = tree.names.text(field.name);
+                let property = self.property_of(base, word, field.span)?;
+                let gas = self.sheet.gases.get(self.sheet.state(state).gas.0 as usize);
+                if property.is_moisture() && gas.is_some_and(|gas| !matches!(gas.model, GasModel::HumidAir(_))) {
+                    let near = nearest(word, Property::ROWS.iter().filter(|row| !row.property.is_moisture()).map(|row| row.field));
+                    let offers = "`p T v rho h u s cp cv k w Z mu lambda`; only humid air has `RH T_dew W`";
+                    self.report(code::unknown_field::finding(field.span, base, "state", word, &near, offers));
+                    return None;
+                }
                 Some(Target::Quantity(self.property(state, property)))
             }
         }

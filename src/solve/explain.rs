@@ -3,7 +3,7 @@
 use std::collections::BTreeSet;
 
 use crate::diagnostic::{Diagnostic, Span, code};
-use crate::sheet::{Expr, ExprId, GasFunction, Kind, Origin, Property, QuantityId, RelationOrigin, Sheet, StateId, write_expr};
+use crate::sheet::{Expr, ExprId, GasFunction, Kind, Origin, Property, QuantityId, RelationOrigin, Sheet, State, StateId, write_expr};
 use crate::syntax::{BinaryOp, Function};
 use crate::units::{self, Dimension};
 
@@ -151,10 +151,12 @@ pub(super) fn conflict(
     for (span, text) in places {
         finding = finding.related(span, text);
     }
-    if let Some(state) = state.map(|state| sheet.state(state)).filter(|state| state.at.len() > 2) {
+    if let Some(state) = state.map(|state| sheet.state(state)).filter(|state| is_overfixed(sheet, state)) {
         let fields: Vec<String> = state.at.iter().map(|(property, _)| format!("`{}`", property.row().field)).collect();
+        let (whose, number) =
+            if sheet.gas(state.gas).degrees_of_freedom() == 3 { ("a state of humid air", "three") } else { ("a state", "two") };
         finding = finding.fact(format!(
-            "a state has two degrees of freedom: two of {} fix `{}`, and the others follow",
+            "{whose} has {number} degrees of freedom: {number} of {} fix `{}`, and the others follow",
             fields.join(", "),
             state.name
         ));
@@ -162,15 +164,20 @@ pub(super) fn conflict(
     finding
 }
 
-/// The last property of a state that is fixed by more than two, where the surplus relation of `part` is a line of the sheet.
+/// Whether a state is given more properties than fix it.
+fn is_overfixed(sheet: &Sheet, state: &State) -> bool {
+    state.at.len() > sheet.gas(state.gas).degrees_of_freedom()
+}
+
+/// The last property of a state that is fixed by more than it needs, where the surplus relation of `part` is a line of the sheet.
 fn third_property(sheet: &Sheet, relation: usize, part: &[usize]) -> Option<usize> {
     if matches!(sheet.relations[relation].origin, RelationOrigin::At(..) | RelationOrigin::Law(..)) {
         return None;
     }
     part.iter().copied().find(|other| {
         let RelationOrigin::At(state, property) = sheet.relations[*other].origin else { return false };
-        let fixed = &sheet.state(state).at;
-        fixed.len() > 2 && fixed.last().is_some_and(|(last, _)| *last == property)
+        let state = sheet.state(state);
+        is_overfixed(sheet, state) && state.at.last().is_some_and(|(last, _)| *last == property)
     })
 }
 

@@ -55,11 +55,9 @@ pub(super) fn of_expression(
                 return None;
             }
             let error = state_function::value(sheet.gas(gas), function, at).err()?;
-            let moist = function.moisture == Some(Property::HumidityRatio);
-            let excess = moist.then(|| condensate(sheet, gas, at)).flatten();
             Some(match owner {
-                Some(state) => refused(sheet, state, &error, excess),
-                None => told(sheet, gas, &Place { span: fallback, state: "", gas: gas_title(sheet, gas) }, &error, excess),
+                Some(state) => refused(sheet, state, &error),
+                None => told(sheet, gas, &Place { span: fallback, state: "", gas: gas_title(sheet, gas) }, &error),
             })
         }
         Expr::Gas(function @ (GasFunction::SaturationPressure | GasFunction::SaturationTemperature), gas, a) => {
@@ -71,12 +69,6 @@ pub(super) fn of_expression(
         }
         _ => None,
     }
-}
-
-/// What condenses, kg per kg of dry air, where humid air of a known humidity ratio holds too much water.
-fn condensate(sheet: &Sheet, gas: GasId, [t_k, p_pa, ratio]: [f64; 3]) -> Option<f64> {
-    let GasModel::HumidAir(air) = &sheet.gas(gas).model else { return None };
-    air.condensate(ratio, t_k, p_pa).ok().filter(|excess| *excess > 0.0)
 }
 
 fn gas_title(sheet: &Sheet, gas: GasId) -> String {
@@ -101,7 +93,7 @@ pub(super) fn phases(sheet: &Sheet, values: &[f64], told: &[bool]) -> Vec<Diagno
             GasModel::HumidAir(_) => None,
         };
         if let Some(error) = error {
-            findings.push(refused(sheet, StateId(at as u32), &error, None));
+            findings.push(refused(sheet, StateId(at as u32), &error));
         }
     }
     findings
@@ -117,13 +109,13 @@ pub(super) fn pressure_and_temperature(state: &State, values: &[f64]) -> Option<
 }
 
 /// A state that its gas refuses.
-pub(super) fn refused(sheet: &Sheet, id: StateId, error: &StateError, condensate: Option<f64>) -> Diagnostic {
+pub(super) fn refused(sheet: &Sheet, id: StateId, error: &StateError) -> Diagnostic {
     let state = sheet.state(id);
     let place = Place { span: state.span, state: &state.name, gas: gas_title(sheet, state.gas) };
-    told(sheet, state.gas, &place, error, condensate)
+    told(sheet, state.gas, &place, error)
 }
 
-fn told(sheet: &Sheet, gas: GasId, place: &Place, error: &StateError, condensate: Option<f64>) -> Diagnostic {
+fn told(sheet: &Sheet, gas: GasId, place: &Place, error: &StateError) -> Diagnostic {
     let Place { span, state, gas: title } = place;
     match error {
         StateError::Liquid { t_k, p_pa, t_sat_k, p_sat_pa } => code::would_condense::liquid(
@@ -150,7 +142,6 @@ fn told(sheet: &Sheet, gas: GasId, place: &Place, error: &StateError, condensate
             &pressure(*partial_pressure_pa),
             p_sat_pa.map(pressure),
             t_dew_k.map(temperature),
-            condensate.map(|excess| units::write_figures(1000.0 * excess, 3)),
         ),
         StateError::Solid { t_k, p_pa, t_triple_k, p_border_pa } => code::would_be_solid::finding(
             *span,

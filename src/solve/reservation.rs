@@ -2,6 +2,7 @@
 //! mixtures for which no good model is known.
 
 use crate::diagnostic::{Diagnostic, code};
+use crate::gas::humid_air::{HumidAir, Moisture};
 use crate::gas::model_weakness::weaknesses;
 use crate::gas::phase::PhaseGuard;
 use crate::gas::transport::Transport;
@@ -10,6 +11,9 @@ use crate::sheet::{GasModel, Property, Sheet, State, StateId};
 use crate::units;
 
 use super::refusal::{beyond_published, limit_words, pressure_and_temperature, temperature};
+
+/// Share of the water that counts as rounding at saturation.
+const SATURATED: f64 = 1e-8;
 
 /// All reservations about the models of a solved sheet.
 pub(super) fn reservations(sheet: &Sheet, values: &[f64], findings: &mut Vec<Diagnostic>) {
@@ -40,8 +44,11 @@ pub(super) fn reservations(sheet: &Sheet, values: &[f64], findings: &mut Vec<Dia
                 extrapolated_heat_capacity(sheet, state, t_k, findings);
                 guards[state.gas.0 as usize].get_or_insert_with(|| PhaseGuard::new(&gas.gas)).check(t_k, p_pa)
             }
-            // That humid air is near its dew point is what its relative humidity says.
-            GasModel::HumidAir(_) => Ok(None),
+            // How near humid air is to its dew point is what its relative humidity says.
+            GasModel::HumidAir(air) => {
+                humid(state, air, values, (t_k, p_pa), findings);
+                Ok(None)
+            }
         };
         if let Ok(Some(near)) = near {
             findings.push(code::near_condensation::finding(
@@ -59,6 +66,35 @@ pub(super) fn reservations(sheet: &Sheet, values: &[f64], findings: &mut Vec<Dia
 fn near_critical(state: &State, real: &RealGas) -> Diagnostic {
     let (t_c, p_c) = real.critical_point().unwrap_or_default();
     code::near_critical::finding(state.span, &state.name, &temperature(t_c), &super::refusal::pressure(p_c))
+}
+
+/// Water of humid air that condenses.
+fn humid(state: &State, air: &HumidAir, values: &[f64], (t_k, p_pa): (f64, f64), findings: &mut Vec<Diagnostic>) {
+    let Some(excess) = condensate(state, air, values) else { return };
+    let ratio = humidity_ratio(state, values).unwrap_or(f64::NAN);
+    let t_dew = air.mole_fraction(t_k, p_pa, Moisture::HumidityRatio(ratio)).and_then(|x| air.dew_point(p_pa, x)).ok().map(temperature);
+    findings.push(code::water_condenses::finding(state.span, &state.name, &units::write_figures(1000.0 * excess, 3), t_dew.as_deref()));
+}
+
+fn humidity_ratio(state: &State, values: &[f64]) -> Option<f64> {
+    let (_, id) = state.properties.iter().find(|(property, _)| *property == Property::HumidityRatio)?;
+    Some(values[id.0 as usize]).filter(|value| value.is_finite())
+}
+
+/// What condenses at a state of humid air, kg per kg of dry air; `None` where nothing does.
+fn condensate(state: &State, air: &HumidAir, values: &[f64]) -> Option<f64> {
+    let ((p_pa, t_k), ratio) = pressure_and_temperature(state, values).zip(humidity_ratio(state, values))?;
+    // Air that is just saturated comes back with rounding.
+    air.condensate(ratio, t_k, p_pa).ok().filter(|excess| *excess > SATURATED * ratio)
+}
+
+/// What condenses at the states of humid air, kg per kg of dry air.
+pub(super) fn condensates(sheet: &Sheet, values: &[f64]) -> Vec<(StateId, f64)> {
+    let of = |(at, state): (usize, &State)| match &sheet.gas(state.gas).model {
+        GasModel::HumidAir(air) => condensate(state, air, values).map(|excess| (StateId(at as u32), excess)),
+        _ => None,
+    };
+    sheet.states.iter().enumerate().filter_map(of).collect()
 }
 
 /// A mixture for which the models disagree, or that only a cubic equation covers. It is told once, at the line of the gas.

@@ -133,6 +133,8 @@ pub struct Solution {
     pub cautions: Vec<bool>,
     /// The verdicts on the states of ideal gases, in the order of the sheet.
     pub states: Vec<StateVerdict>,
+    /// Water that condenses at states of humid air, kg per kg of dry air.
+    pub condensates: Vec<(StateId, f64)>,
     /// Relations that were not needed and agree.
     pub surplus: Vec<SurplusCheck>,
     /// Relations solved or checked.

@@ -475,6 +475,7 @@ fn conclude(
             },
         })
         .collect();
+    let condensates = reservation::condensates(sheet, &values);
     Solution {
         n_unknowns: steps.iter().map(|step| step.quantities.len()).sum(),
         n_relations: sheet.relations.len(),
@@ -486,6 +487,7 @@ fn conclude(
         assumptions,
         cautions,
         states,
+        condensates,
         surplus,
         largest_residual: worst.map_or(0.0, |(_, residual)| residual),
         worst_relation: worst.map(|(at, _)| at),

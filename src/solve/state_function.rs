@@ -180,7 +180,11 @@ fn humid(air: &HumidAir, function: StateFunction, at: [f64; 3]) -> Result<f64, S
     if by != [Property::T, Property::P] {
         return Err(dependent(function));
     }
-    let state = air.state(at[0], at[1], given)?;
+    let state = match (air.state(at[0], at[1], given), given) {
+        // More water than the air can hold: what is left as a gas is saturated, and the rest has condensed.
+        (Err(StateError::Condenses { .. }), Moisture::HumidityRatio(_)) => air.state(at[0], at[1], Moisture::RelativeHumidity(1.0))?,
+        (state, _) => state?,
+    };
     humid_property(&state, function.of).ok_or_else(|| dependent(function))
 }
 

@@ -118,7 +118,7 @@ pub(super) fn below_the_heat_capacity(sheet: &GoodSheet) -> Vec<Mutant> {
         let text = sheet.with(Span { start: value.span.start, end: value.digits.end }, "-150");
         let mut lines = sheet.lines_using(name);
         lines.extend(sheet.lines_of(statement.span).chain(sheet.lines_of(given.span)));
-        mutants.push(Mutant::new(text, format!("`{name}` at -150 degC"), lines, &[&["200"]]));
+        mutants.push(Mutant::new(text, format!("`{name}` at -150 degC"), lines, &[&["200", "solid", "liquid"]]));
     }
     mutants
 }

@@ -116,6 +116,7 @@ codes! {
     unknown_word,
     unused_input,
     unusual_size,
+    water_condenses,
     weak_model,
     word_not_offered,
     would_be_solid,

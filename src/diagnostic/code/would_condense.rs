@@ -68,8 +68,7 @@ pub(crate) fn wet(span: Span, state: &str, gas: &str, percent: &str, t_sat: &str
         .help("check the properties that fix the state; two-phase states are not calculated here")
 }
 
-/// A component of a mixture, `condensate` in grams per kilogram of dry air where the mixture is humid air.
-#[expect(clippy::too_many_arguments, reason = "everything that a reader checks the dew point with")]
+/// A component of a mixture.
 pub(crate) fn component(
     span: Span,
     state: &str,
@@ -78,7 +77,6 @@ pub(crate) fn component(
     partial: &str,
     p_sat: Option<String>,
     t_dew: Option<String>,
-    condensate: Option<String>,
 ) -> Diagnostic {
     let mut finding =
         Diagnostic::error(CODE, span, format!("{component} would condense in {} at {t}", subject(state, "the mixture"))).label("below the dew point");
@@ -89,10 +87,5 @@ pub(crate) fn component(
     if let Some(t_dew) = t_dew {
         finding = finding.fact(format!("dew point {t_dew}"));
     }
-    match condensate {
-        Some(grams) => finding
-            .fact(format!("{grams} g of water condense per kg of dry air"))
-            .help("describe the air behind the separator with `RH = 100 %`; what condenses is the difference of both `W`"),
-        None => finding.help("check temperature, pressure and composition: what condenses has left the gas"),
-    }
+    finding.help("check temperature, pressure and composition: what condenses has left the gas")
 }

@@ -163,6 +163,14 @@ fn humid_air(draft: &Draft, title: &str, dry: &Gas, states: &[StateId], properti
         sentences.push(zero(dry, properties));
     }
     sentences.push("No ideal-gas assumption on the density.".to_owned());
+    for id in states {
+        let Some(condensate) = draft.input.condensate(*id) else { continue };
+        let amount = Written { number: write_figures(1000.0 * condensate, 3), unit: "g/kg".to_owned() }.typeset();
+        let name = emphasis(&draft.input.sheet.state(*id).name);
+        sentences.push(format!(
+            "At {name} {amount} of water per dry air condense: its properties are those of the saturated air that is left, and *W* counts all the water."
+        ));
+    }
     sentences
 }
 
