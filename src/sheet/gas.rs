@@ -2,7 +2,7 @@
 
 use std::sync::Arc;
 
-use crate::diagnostic::{Span, code};
+use crate::diagnostic::{Span, code, nearest};
 use crate::gas::humid_air::HumidAir;
 use crate::gas::{self, Gas, MixtureError, Named as NamedGas, RealGas};
 use crate::syntax::{self, GasPart, Model, Named, ShareBasis, Statement};
@@ -50,11 +50,11 @@ impl Reader<'_> {
                     } else if unknown.ambiguous {
                         code::unknown_gas::ambiguous(part.species.span, &part.species.text, &unknown.near.join(", "))
                     } else {
-                        let mut near = unknown.near;
-                        if let ([_], true) = (parts, crate::diagnostic::nearest(&part.species.text, [HUMID_AIR]).contains(&HUMID_AIR)) {
-                            near.insert(0, HUMID_AIR);
-                        }
-                        code::unknown_gas::finding(part.species.span, &part.species.text, &near)
+                        // Another name of humid air, or a slip in its own, where it may stand: alone.
+                        let text = &part.species.text;
+                        let humid = parts.len() == 1 && part.share.is_none() && (unknown.later || !nearest(text, [HUMID_AIR]).is_empty());
+                        let near: Vec<&str> = humid.then_some(HUMID_AIR).into_iter().chain(unknown.near.iter().copied()).collect();
+                        code::unknown_gas::finding(part.species.span, text, &near)
                     };
                     self.report(finding);
                 }

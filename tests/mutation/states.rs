@@ -107,7 +107,7 @@ pub(super) fn property_twice(sheet: &GoodSheet) -> Vec<Mutant> {
 /// A temperature below the range of the heat capacity, where the state needs one.
 pub(super) fn below_the_heat_capacity(sheet: &GoodSheet) -> Vec<Mutant> {
     let mut mutants = Vec::new();
-    for (statement, name, at) in states(sheet) {
+    for (statement, name, at) in states(sheet).into_iter().filter(|(_, name, _)| is_ideal(sheet, name)) {
         let Some((_, id)) = at.iter().find(|(property, _)| sheet.name_of(*property) == "T") else { continue };
         let caloric = |field: &str| matches!(field, "h" | "u" | "s" | "cp" | "cv" | "k" | "w");
         let used =
