@@ -154,7 +154,7 @@ fn told(sheet: &Sheet, gas: GasId, place: &Place, error: &StateError) -> Diagnos
         StateError::OutOfRange(limit) => {
             code::outside_model_range::equation(*span, state, title, &Words::of(limit).text(), &source(sheet, gas))
         }
-        StateError::NoState { quantity, value } => code::no_such_state::impossible(*span, state, quantity, *value <= 0.0),
+        StateError::NoState { quantity, value } => code::no_such_state::impossible(*span, state, word_of(quantity), *value <= 0.0),
         StateError::NoSuchState { properties: [a, b] } => {
             let text = |(symbol, value): &(&str, f64)| format!("{symbol} = {}", units::write_figures(*value, 5));
             code::no_such_state::none(*span, state, title, &format!("{} and {} (SI)", text(a), text(b)))
@@ -170,6 +170,11 @@ fn told(sheet: &Sheet, gas: GasId, place: &Place, error: &StateError) -> Diagnos
             code::no_such_state::not_converged(*span, state, title, what, model, *iterations)
         }
     }
+}
+
+/// The trade's word for a quantity that a kernel names by its symbol.
+fn word_of(quantity: &str) -> &str {
+    Property::of_field(quantity).map_or(quantity, |property| property.row().word)
 }
 
 /// The publication of the model of a gas.
@@ -226,7 +231,7 @@ fn saturation(gas: &str, place: Span, error: &StateError) -> Option<Diagnostic> 
             let [value, published, _] = Words::of(limit).text();
             code::no_gas_data::beyond_saturation(place, gas, &value, &published)
         }
-        StateError::NoState { quantity, value } => code::no_such_state::impossible(place, "", quantity, *value <= 0.0),
+        StateError::NoState { quantity, value } => code::no_such_state::impossible(place, "", word_of(quantity), *value <= 0.0),
         StateError::NotConverged { what, model, iterations, .. } => {
             code::no_such_state::not_converged(place, "", gas, what, model, *iterations)
         }
