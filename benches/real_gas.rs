@@ -45,6 +45,23 @@ fn density(criterion: &mut Criterion) {
     group.finish();
 }
 
+/// Temperatures of nitrogen from pressure and specific volume, over the range of the peers' W2: 220 to 420 K, 1 to 200 bar.
+fn temperature(criterion: &mut Criterion) {
+    let Some(real) = pure("nitrogen").and_then(|gas| RealGas::new(&gas).ok()) else { return };
+    let state = |i: i32| {
+        // Golden ratio and its square: spread as evenly as random numbers are meant to be.
+        let (x, y) = ((f64::from(i) * 0.618_034).fract(), (f64::from(i) * 0.381_966_3).fract());
+        let (t, p) = (220.0 + 200.0 * x, 1e5 + 199e5 * y);
+        real.density_kg_m3(t, p).ok().map(|rho| (p, 1.0 / rho))
+    };
+    let states: Vec<(f64, f64)> = (0..10_000).filter_map(state).collect();
+    let mut group = criterion.benchmark_group("nitrogen, T of 10 000 states from p and v");
+    group.throughput(Throughput::Elements(states.len() as u64)).sample_size(10);
+    let one = |(p, v): &(f64, f64)| real.solve((Property::Pressure, *p), (Property::Volume, *v)).ok().map(|state| state.t_k);
+    group.bench_function("by the reference equation", |bencher| bencher.iter(|| states.iter().filter_map(one).sum::<f64>()));
+    group.finish();
+}
+
 fn nitrogen(criterion: &mut Criterion) {
     let Some(gas) = pure("nitrogen") else { return };
     let Ok(real) = RealGas::new(&gas) else { return };
@@ -93,5 +110,5 @@ fn mixture(criterion: &mut Criterion) {
     }
 }
 
-criterion_group!(benches, density, nitrogen, saturation, mixture);
+criterion_group!(benches, density, temperature, nitrogen, saturation, mixture);
 criterion_main!(benches);
