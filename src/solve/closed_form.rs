@@ -134,7 +134,7 @@ fn inverse_of(function: StateFunction, place: usize) -> Option<StateFunction> {
         (Some(moisture), 2) => of.is_moisture().then_some(StateFunction { of: moisture, moisture: Some(of), ..function }),
         (Some(_), _) => None,
         (None, 1) if of.is_moisture() => Some(StateFunction { of: y, y: of, ..function }),
-        (None, 0) if of.is_moisture() => None,
+        (None, 0) if of.is_moisture() => Some(StateFunction { of: x, x: of, ..function }),
         (None, 0) => of.fixes_a_state().then_some(StateFunction { of: x, x: of, ..function }),
         (None, _) => of.fixes_a_state().then_some(StateFunction { of: y, y: of, ..function }),
     }

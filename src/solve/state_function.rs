@@ -8,6 +8,7 @@ use crate::gas::humid_air::{HumidAir, HumidAirState, Moisture};
 use crate::gas::transport::Transport;
 use crate::gas::{Gas, RealGas, StateError};
 use crate::sheet::{GasModel, Property, SheetGas, StateFunction};
+use crate::units::constants::STANDARD_STATE_PRESSURE;
 
 /// A value with its derivatives by the arguments in their order.
 pub(super) type Sloped = (f64, [f64; 3]);
@@ -176,9 +177,21 @@ fn humid(air: &HumidAir, function: StateFunction, at: [f64; 3]) -> Result<f64, S
         let x_water = air.mole_fraction(t_k, p_pa, given)?;
         return if function.of == Property::DewPoint { air.dew_point(p_pa, x_water) } else { Ok(air.humidity_ratio(x_water)) };
     }
+    // The pressure at which so much water has that dew point.
+    if by == [Property::DewPoint, Property::HumidityRatio] && function.of == Property::P {
+        return pressure_of_dew_point(air, at[0], at[1]);
+    }
     let Some(given) = function.moisture.and_then(|property| moisture(property, at[2])) else { return Err(dependent(function)) };
     if by != [Property::T, Property::P] {
         return Err(dependent(function));
+    }
+    if matches!(function.of, Property::RelativeHumidity | Property::HumidityRatio) {
+        // Neither needs the density or the dew point of the state, which is only asked where it refuses what is given.
+        let x_water = air.mole_fraction(at[0], at[1], given)?;
+        let humidity = air.relative_humidity(at[0], at[1], x_water)?;
+        if humidity <= 1.0 || matches!(given, Moisture::HumidityRatio(_)) {
+            return Ok(if function.of == Property::RelativeHumidity { humidity.min(1.0) } else { air.humidity_ratio(x_water) });
+        }
     }
     let state = match (air.state(at[0], at[1], given), given) {
         // More water than the air can hold: what is left as a gas is saturated, and the rest has condensed.
@@ -186,6 +199,28 @@ fn humid(air: &HumidAir, function: StateFunction, at: [f64; 3]) -> Result<f64, S
         (state, _) => state?,
     };
     humid_property(&state, function.of).ok_or_else(|| dependent(function))
+}
+
+/// The pressure, Pa, at which air of a humidity ratio has a dew point, K: its partial pressure of water is then that of saturation,
+/// which hardly moves with the pressure.
+fn pressure_of_dew_point(air: &HumidAir, t_dew_k: f64, ratio: f64) -> Result<f64, StateError> {
+    /// Relative step at which the pressure stays.
+    const STAYS: f64 = 1e-14;
+    const MOST_STEPS: u32 = 100;
+    let mut p_pa = STANDARD_STATE_PRESSURE;
+    let x_water = air.mole_fraction(DEW_POINT_AT_K, p_pa, Moisture::HumidityRatio(ratio))?;
+    if x_water <= 0.0 {
+        return Err(StateError::NoState { quantity: Property::HumidityRatio.row().word, value: ratio });
+    }
+    for _ in 0..MOST_STEPS {
+        let next = air.saturated_partial_pressure(t_dew_k, p_pa)? / x_water;
+        let step = (next / p_pa - 1.0).abs();
+        p_pa = next;
+        if step < STAYS {
+            break;
+        }
+    }
+    Ok(p_pa)
 }
 
 /// A temperature at which the humidity ratio of a dew point is looked up; it does not depend on it.
