@@ -253,6 +253,9 @@ pub(super) fn pressure_with_basis(unit: &str, basis: &str) -> Option<String> {
 pub fn joined_basis(unit: &str, basis: &str) -> Option<(String, &'static str)> {
     let (_, basis) = BASES.iter().find(|(ending, _)| *ending == basis)?;
     let spelling = SPELLINGS.iter().find(|(words, _)| words.contains(&unit)).map_or(unit, |(_, spelling)| spelling);
+    // An unknown word is not read: that would look for what it was meant for, ending by ending, and never come back.
+    let first = spelling.split(['.', '·', '⋅', '/', '(']).next()?.trim_end_matches(|c: char| c.is_ascii_digit());
+    registry().find(first)?;
     let known = parse(spelling).ok().filter(|unit| unit.dimension == Dimension::PRESSURE)?;
     Some((known.name, basis))
 }
@@ -308,6 +311,9 @@ mod tests {
         ] {
             assert_eq!(help_for(word), expected, "{word}");
         }
+        // Endings of endings: each is taken off once.
+        let many = format!("m3{}", "e".repeat(500));
+        assert!(suggest(&many).cure.is_none());
         assert_eq!(pressure_with_basis("m", "g"), None);
         assert_eq!(pressure_with_basis("bar", "x"), None);
     }
